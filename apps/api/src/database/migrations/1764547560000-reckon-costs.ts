@@ -150,15 +150,17 @@ const RECKON = String.raw`
  * largest remainder, ties to the first leg. The caller holds the lots' locks.
  */
 CREATE FUNCTION reckon_legs(legs leg[], pools jsonb) RETURNS leg[] LANGUAGE plpgsql
-SET search_path = pg_catalog, public, pg_temp AS $$
+-- Arrays have no statistics: the planner takes ten legs for granted, and thousands would loop in loops.
+SET enable_nestloop = off SET search_path = pg_catalog, public, pg_temp AS $$
 DECLARE
   r record; lot_now bigint := 0; place_now bigint := 0; weight_left numeric; cost_left numeric; taken numeric;
   any_done boolean;
+  -- Apart from the legs: assigning into an array of rows copies it whole each time.
+  costs bigint[]; hows text[];
 BEGIN
-  FOR i IN 1 .. coalesce(array_length(legs, 1), 0) LOOP
-    IF legs[i].how = 'given' THEN legs[i].cost := legs[i].given;
-    ELSIF legs[i].how = 'none' OR legs[i].is_consigned THEN legs[i].cost := 0; END IF;
-  END LOOP;
+  SELECT array_agg(CASE WHEN l.how = 'given' THEN l.given WHEN l.how = 'none' OR l.is_consigned THEN 0
+      WHEN l.how = 'carried' AND l.weight = 0 THEN 0 END ORDER BY l.idx), array_agg(l.how ORDER BY l.idx)
+    INTO costs, hows FROM unnest(legs) l;
   FOR r IN
     SELECT l.idx, l.lot_id, l.place_id, l.weight, l.is_consigned, coalesce(b.weight, 0) AS has,
       coalesce(b.cost, 0) AS cost
@@ -174,28 +176,26 @@ BEGIN
         'place', (SELECT name FROM place WHERE id = r.place_id),
         'has', r.has, 'asked', -r.weight));
     END IF;
-    IF legs[r.idx].how = 'carried' THEN
+    IF hows[r.idx] = 'carried' THEN
       taken := CASE WHEN -r.weight = weight_left THEN cost_left ELSE half_away(cost_left * -r.weight, weight_left) END;
-      legs[r.idx].cost := -taken;
+      costs[r.idx] := -taken;
       cost_left := cost_left - taken;
     END IF;
     weight_left := weight_left + r.weight;
   END LOOP;
-  FOR i IN 1 .. coalesce(array_length(legs, 1), 0) LOOP
-    IF legs[i].how = 'carried' AND legs[i].cost IS NULL THEN legs[i].cost := 0; END IF;
-  END LOOP;
   LOOP
     any_done := false;
     FOR r IN
-      WITH source AS (
-        SELECT (p.n - 1)::int AS pool, -sum(l.cost) AS total, bool_and(l.cost IS NOT NULL) AS is_ready
+      WITH known AS (SELECT c.cost, c.idx FROM unnest(costs) WITH ORDINALITY c(cost, idx)),
+      source AS MATERIALIZED (
+        SELECT (p.n - 1)::int AS pool, -sum(k.cost) AS total, bool_and(k.cost IS NOT NULL) AS is_ready
         FROM jsonb_array_elements(coalesce(pools, '[]')) WITH ORDINALITY p(pool, n)
         CROSS JOIN LATERAL jsonb_array_elements_text(p.pool -> 'of') s(idx)
-        JOIN unnest(legs) l ON l.idx = s.idx::int + 1 GROUP BY p.n),
+        JOIN known k ON k.idx = s.idx::int + 1 GROUP BY p.n),
       member AS (
         SELECT l.idx, l.pool, s.total, l.share, sum(l.share) OVER (PARTITION BY l.pool) AS shares
         FROM unnest(legs) l JOIN source s ON s.pool = l.pool AND s.is_ready
-        WHERE l.how = 'allotted' AND l.cost IS NULL),
+        JOIN known k ON k.idx = l.idx WHERE l.how = 'allotted' AND k.cost IS NULL),
       part AS (
         SELECT idx, pool, total, CASE WHEN shares = 0 THEN 0 ELSE div(abs(total) * share, shares) END AS base,
           CASE WHEN shares = 0 THEN 0 ELSE mod(abs(total) * share, shares) END AS remainder, shares
@@ -206,12 +206,14 @@ BEGIN
         FROM part)
       SELECT idx, sign(total) * (base + CASE WHEN shares > 0 AND rank <= odd THEN 1 ELSE 0 END) AS cost FROM ranked
     LOOP
-      legs[r.idx].cost := r.cost;
+      costs[r.idx] := r.cost;
       any_done := true;
     END LOOP;
-    EXIT WHEN NOT any_done;
+    EXIT WHEN NOT any_done OR array_position(costs, NULL) IS NULL;
   END LOOP;
-  IF EXISTS (SELECT 1 FROM unnest(legs) l WHERE l.cost IS NULL) THEN PERFORM refuse('movement_cost_fits_kind'); END IF;
-  RETURN legs;
+  IF array_position(costs, NULL) IS NOT NULL THEN PERFORM refuse('movement_cost_fits_kind'); END IF;
+  RETURN (SELECT array_agg(ROW(l.idx, l.lot_id, l.place_id, l.place_kind, l.inside, l.is_consigned, l.weight, l.pieces,
+      l.how, l.given, l.pool, l.share, l.line_id, l.flow, l.difference_id, costs[l.idx])::leg ORDER BY l.idx)
+    FROM unnest(legs) l);
 END $$;
 `;
