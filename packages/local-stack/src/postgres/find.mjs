@@ -1,28 +1,21 @@
-import { spawnSync } from 'node:child_process';
 import { existsSync, mkdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
+
+import { runProgram } from '../processes/run-program.mjs';
 
 /** Where Debian keeps PostgreSQL 15; these programs are not on the PATH. */
 const DEBIAN_FOLDER = '/usr/lib/postgresql/15/bin';
 const CREATE_CLUSTER = '/etc/postgresql-common/createcluster.conf';
 
 /**
- * The folder of PostgreSQL 15's programs, or null where there is none.
- * @returns {string | null}
- */
-export function findPostgres() {
-  return existsSync(join(DEBIAN_FOLDER, 'postgres')) ? DEBIAN_FOLDER : null;
-}
-
-/**
  * The folder of PostgreSQL 15's programs, installed from Debian's packages where root may do so.
  * Throws one clear sentence where it may not or cannot.
  * @param {(sentence: string) => void} say
- * @returns {string}
+ * @param {string} [folder] where to look
+ * @returns {Promise<string>}
  */
-export function findOrInstallPostgres(say) {
-  const found = findPostgres();
-  if (found) return found;
+export async function findOrInstallPostgres(say, folder = DEBIAN_FOLDER) {
+  if (existsSync(join(folder, 'postgres'))) return folder;
   if (process.getuid?.() !== 0) {
     throw new Error('PostgreSQL 15 is not installed: ask for "apt-get install postgresql-15", or start once as root.');
   }
@@ -33,11 +26,8 @@ export function findOrInstallPostgres(say) {
     writeFileSync(CREATE_CLUSTER, 'create_main_cluster = false\n');
   }
   const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
-  /** @type {import('node:child_process').SpawnSyncOptions} */
-  const options = { env, stdio: ['ignore', 'ignore', 'inherit'] };
-  spawnSync('apt-get', ['-qq', 'update'], options);
-  spawnSync('apt-get', ['-qq', '-y', '-o', 'Dpkg::Options::=--force-confold', 'install', 'postgresql-15'], options);
-  const installed = findPostgres();
-  if (!installed) throw new Error('PostgreSQL 15 could not be installed from Debian\'s packages.');
-  return installed;
+  await runProgram('apt-get', ['-qq', 'update'], { env });
+  await runProgram('apt-get', ['-qq', '-y', '-o', 'Dpkg::Options::=--force-confold', 'install', 'postgresql-15'], { env });
+  if (!existsSync(join(folder, 'postgres'))) throw new Error('PostgreSQL 15 could not be installed from Debian\'s packages.');
+  return folder;
 }

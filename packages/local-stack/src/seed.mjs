@@ -1,0 +1,4 @@
+import { runApiProgram } from './run-api-program.mjs';
+import { runCommand } from './run-command.mjs';
+
+runCommand(() => runApiProgram('seed'));
