@@ -7,7 +7,9 @@ const here = fileURLToPath(new URL('./', import.meta.url));
 const [folder = `${here}dist`] = process.argv.slice(2);
 
 await build({
-  entryPoints: ['main', 'worker', 'migrate', 'verify', 'seed'].map((name) => `${here}src/${name}.ts`).filter(existsSync),
+  entryPoints: ['main', 'worker', 'migrate', 'verify', 'seed']
+    .map((name) => `${here}src/${name}.ts`)
+    .filter(existsSync),
   outdir: folder,
   outExtension: { '.js': '.mjs' },
   bundle: true,
@@ -17,12 +19,17 @@ await build({
   sourcemap: true,
   logLevel: 'warning',
   tsconfig: `${here}../../tsconfig.base.json`,
-  plugins: [{
-    // Own packages are source and go in; `packages: 'external'` would leave them outside as well.
-    name: 'own-source',
-    setup({ onResolve }) {
-      onResolve({ filter: /^[^./]/ }, ({ kind, path }) =>
-        kind === 'entry-point' || path.startsWith('@foldwell/') ? undefined : { path, external: true });
+  plugins: [
+    {
+      // Own packages are source and go in; `packages: 'external'` would leave them outside as well.
+      name: 'own-source',
+      setup({ onResolve }) {
+        onResolve({ filter: /^[^./]/ }, ({ kind, path }) =>
+          kind === 'entry-point' || path.startsWith('@foldwell/')
+            ? undefined
+            : { path, external: true },
+        );
+      },
     },
-  }],
+  ],
 });

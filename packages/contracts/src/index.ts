@@ -9,3 +9,4 @@ export * from './pick-up.js';
 export * from './memos.js';
 export * from './returns.js';
 export * from './first-light.js';
+export * from './fields.js';

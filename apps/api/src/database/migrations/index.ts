@@ -1,3 +1,4 @@
+import { MakePeople1764547200000 } from './1764547200000-make-people.js';
 import { MakeHouse1764547260000 } from './1764547260000-make-house.js';
 import { MakePartiesAndPlaces1764547320000 } from './1764547320000-make-parties-and-places.js';
 import { MakeLots1764547380000 } from './1764547380000-make-lots.js';
@@ -10,6 +11,7 @@ import { GrantRights1764547740000 } from './1764547740000-grant-rights.js';
 
 /** In the order they run. Dated files, never edited once landed. */
 export const migrations = [
+  MakePeople1764547200000,
   MakeHouse1764547260000,
   MakePartiesAndPlaces1764547320000,
   MakeLots1764547380000,

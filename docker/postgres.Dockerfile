@@ -1,0 +1,3 @@
+FROM postgres:15-bookworm
+COPY docker/postgres/init.sql /docker-entrypoint-initdb.d/init.sql
+CMD ["postgres", "-c", "synchronous_commit=on"]
