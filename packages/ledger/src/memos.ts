@@ -1,5 +1,5 @@
 import type { DifferenceRef, Legs, LotRef, PlaceRef, Quantity } from './leg.js';
-import { move, restate, together } from './moves.js';
+import { move, together } from './moves.js';
 
 /** A line of a memo that stands: its lot, its memo, its id. */
 export interface Line {
@@ -36,10 +36,18 @@ export function bringBack(line: Line, to: PlaceRef, back: Quantity): Legs {
  * over or short is restated on the lot without cost (the rest takes all).
  */
 export function bringBackRestated(line: Line, to: PlaceRef, expected: Quantity, found: Quantity): Legs {
-  const over = { weight: found.weight - expected.weight, pieces: found.pieces - expected.pieces };
   const mark = { line: { id: line.lineId } };
-  return together(bringBack(line, to, expected), restate(line.lot, to, over, {
-    at: { ...mark, flow: 'returned' }, loss: { ...mark, flow: 'restated' } }));
+  const short = { weight: expected.weight - found.weight, pieces: expected.pieces - found.pieces };
+  return {
+    legs: [
+      { lot: line.lot, place: memoOf(line), weight: -expected.weight, pieces: -expected.pieces,
+        cost: { how: 'carried' }, ...out(line) },
+      // One leg at what was found: a lighter weight taken off in a leg of its own would find nothing there yet.
+      { lot: line.lot, place: to, ...found, cost: { how: 'allotted', pool: 0, weight: 1 }, ...mark, flow: 'returned' },
+      { lot: line.lot, place: { kind: 'loss' }, ...short, cost: { how: 'none' }, ...mark, flow: 'restated' },
+    ],
+    pools: [{ of: [0] }],
+  };
 }
 
 /** What didn't come back lies in missing, held by its difference. */
