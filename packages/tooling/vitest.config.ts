@@ -4,19 +4,41 @@ import { defineConfig } from 'vitest/config';
 const root = fileURLToPath(new URL('../../', import.meta.url));
 const env = { TZ: 'UTC' };
 
-/** Two projects: `beside` needs no database; `house` runs against a real one. */
+/** `beside` needs no database; `house` runs against a real one; `outside` asks other programs. */
 export default defineConfig({
   root,
   test: {
     maxWorkers: 2,
+    teardownTimeout: 30_000,
     projects: [
-      { root, test: { name: 'beside', env, include: ['{apps,packages}/**/src/**/*.test.{ts,tsx}'] } },
+      {
+        root,
+        test: { name: 'beside', env, include: ['{apps,packages}/**/src/**/*.test.{ts,tsx}'] },
+      },
       {
         root,
         test: {
-          name: 'house', env, include: ['tests/**/*.test.ts'], exclude: ['tests/outside-programs/**', '**/node_modules/**'],
+          name: 'house',
+          env,
+          include: ['tests/**/*.test.ts'],
+          exclude: ['tests/outside-programs/**', '**/node_modules/**'],
           globalSetup: ['tests/support/global-setup.ts'],
-          testTimeout: process.env.FOLDWELL_FULL === '1' ? 3_600_000 : 120_000, hookTimeout: 120_000, teardownTimeout: 30_000,
+          testTimeout: process.env.FOLDWELL_FULL === '1' ? 3_600_000 : 120_000,
+          hookTimeout: 120_000,
+        },
+      },
+      {
+        root,
+        test: {
+          name: 'outside',
+          env,
+          include: ['tests/outside-programs/**/*.test.ts'],
+          globalSetup: [
+            'tests/support/install-outside-programs.ts',
+            'tests/support/global-setup.ts',
+          ],
+          testTimeout: 300_000,
+          hookTimeout: 300_000,
         },
       },
     ],

@@ -17,13 +17,20 @@ describe('the five roles of the database', async () => {
     }
   }
 
-  it.each(['owner', 'api', 'worker', 'counter', 'reader'] as const)('%s is no superuser and plans without jit', async (role) => {
-    expect(await ask(database.urls[role], 'SELECT usesuper FROM pg_user WHERE usename = current_user')).toBe(false);
-    expect(await ask(database.urls[role], 'SHOW jit')).toBe('off');
-  });
+  it.each(['owner', 'api', 'worker', 'counter', 'reader'] as const)(
+    '%s is no superuser and plans without jit',
+    async (role) => {
+      expect(
+        await ask(database.urls[role], 'SELECT usesuper FROM pg_user WHERE usename = current_user'),
+      ).toBe(false);
+      expect(await ask(database.urls[role], 'SHOW jit')).toBe('off');
+    },
+  );
 
   it.each(['api', 'worker', 'counter', 'reader'] as const)('%s makes no table', async (role) => {
-    await expect(ask(database.urls[role], 'CREATE TABLE own (id int)')).rejects.toMatchObject({ code: expect.stringMatching(/^(42501|25006)$/) as string });
+    await expect(ask(database.urls[role], 'CREATE TABLE own (id int)')).rejects.toMatchObject({
+      code: expect.stringMatching(/^(42501|25006)$/) as string,
+    });
   });
 
   it('waits five seconds for a lock and no longer', async () => {

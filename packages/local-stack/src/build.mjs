@@ -13,8 +13,16 @@ export const WEB_DIST = join(ROOT, 'apps/web/dist');
 export async function build() {
   await Promise.all([
     buildInto(API_DIST, ['apps/api'], (folder) => ['apps/api/build.mjs', folder]),
-    buildInto(WEB_DIST, ['apps/web'],
-      (folder) => ['node_modules/vite/bin/vite.js', 'build', 'apps/web', '--outDir', folder, '--emptyOutDir', '--logLevel', 'warn']),
+    buildInto(WEB_DIST, ['apps/web'], (folder) => [
+      'node_modules/vite/bin/vite.js',
+      'build',
+      'apps/web',
+      '--outDir',
+      folder,
+      '--emptyOutDir',
+      '--logLevel',
+      'warn',
+    ]),
   ]);
 }
 
@@ -31,7 +39,10 @@ async function buildInto(dist, folders, command) {
   if (dist === WEB_DIST && !existsSync(join(ROOT, 'apps/web/index.html'))) return;
   const next = `${dist}.${process.pid}`;
   try {
-    await runProgram(process.execPath, command(next), { cwd: ROOT, env: { ...process.env, NODE_ENV: 'production' } });
+    await runProgram(process.execPath, command(next), {
+      cwd: ROOT,
+      env: { ...process.env, NODE_ENV: 'production' },
+    });
     writeFileSync(join(next, '.inputs'), stamp);
     rmSync(dist, { recursive: true, force: true });
     renameSync(next, dist);
@@ -51,7 +62,9 @@ function hashOf(paths) {
 function addTo(hash, path) {
   const full = join(ROOT, path);
   if (!/[.][a-z]+$/.test(path)) {
-    const names = readdirSync(full).filter((name) => !/^(node_modules|dist.*|[.].*)$/.test(name) && !name.includes('.test.'));
+    const names = readdirSync(full).filter(
+      (name) => !/^(node_modules|dist.*|[.].*)$/.test(name) && !name.includes('.test.'),
+    );
     for (const name of names.sort()) addTo(hash, join(path, name));
     return;
   }

@@ -17,9 +17,11 @@ export async function openDatabase() {
     forgetHouse();
   }
   if (!isMade(folder)) {
-    say(folder.startsWith(ELSEWHERE)
-      ? `Making the database under ${ELSEWHERE}, since its user cannot get into this folder.`
-      : 'Making the database.');
+    say(
+      folder.startsWith(ELSEWHERE)
+        ? `Making the database under ${ELSEWHERE}, since its user cannot get into this folder.`
+        : 'Making the database.',
+    );
     await makeCluster({ bin, folder, passwords: secrets().passwords });
   }
   return runCluster({ bin, folder });

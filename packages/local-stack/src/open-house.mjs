@@ -20,13 +20,18 @@ export async function openHouse({ port, isEmpty }) {
   const env = programEnv({ port: database.port, secrets: secrets() });
   await runProgram(process.execPath, programArgs('migrate'), { env: env.migrate });
   const house = await fillHouse(isEmpty, env.seed);
-  const [api, worker] = await Promise.all([startApi(env.main, port), startWorker(env.worker)]);
+  const worker = startWorker(env.worker);
+  const api = await startApi(env.main, port);
   tellWhere({ address: api.address, databasePort: database.port });
   say(`Foldwell is open at ${api.address}. ${house.signIns}`);
   const ended = await Promise.race([
-    api.ended.then(() => 'The API'), worker.ended.then(() => 'The worker'), database.ended.then(() => 'The database'),
+    api.ended.then(() => 'The API'),
+    worker.ended.then(() => 'The worker'),
+    database.ended.then(() => 'The database'),
   ]);
-  throw new Error(`${ended} has ended by itself, so all is stopped. Its own words are in the state folder.`);
+  throw new Error(
+    `${ended} has ended by itself, so all is stopped. Its own words are in the state folder.`,
+  );
 }
 
 /**
@@ -36,17 +41,26 @@ export async function openHouse({ port, isEmpty }) {
 async function fillHouse(isEmpty, env) {
   const kept = keptHouse();
   if (kept) {
-    if (isEmpty && kept.kind === 'demo') throw new Error('A house is kept here already. "npm run reset" takes it away, then --empty begins a new one.');
+    if (isEmpty && kept.kind === 'demo')
+      throw new Error(
+        'A house is kept here already. "npm run reset" takes it away, then --empty begins a new one.',
+      );
     return kept;
   }
   if (isEmpty || !existsSync(programArgs('seed')[1] ?? '')) {
-    const house = { kind: /** @type {const} */ ('empty'), isReady: true, signIns: 'Its first page makes the first owner.' };
+    const house = {
+      kind: /** @type {const} */ ('empty'),
+      isReady: true,
+      signIns: 'Its first page makes the first owner.',
+    };
     keepHouse(house);
     return house;
   }
   keepHouse({ kind: 'demo', isReady: false, signIns: '' });
   say('Making the demo house.');
-  const lines = (await runProgram(process.execPath, programArgs('seed'), { env })).trim().split('\n');
+  const lines = (await runProgram(process.execPath, programArgs('seed'), { env }))
+    .trim()
+    .split('\n');
   const house = { kind: /** @type {const} */ ('demo'), isReady: true, signIns: lines.at(-1) ?? '' };
   keepHouse(house);
   return house;

@@ -20,12 +20,27 @@ export function programArgs(name) {
  */
 export function programEnv({ port, secrets }) {
   const urls = databaseUrls({ port, passwords: secrets.passwords });
-  const base = { PATH: process.env.PATH ?? '', TZ: 'UTC', NODE_ENV: 'production', HOST: '127.0.0.1' };
+  const base = {
+    PATH: process.env.PATH ?? '',
+    TZ: 'UTC',
+    NODE_ENV: 'production',
+    HOST: '127.0.0.1',
+  };
   return {
-    main: { ...base, DATABASE_URL: urls.api, SESSION_SECRET: secrets.sessionSecret, ...(existsSync(WEB_DIST) && { WEB_DIR: WEB_DIST }) },
+    main: {
+      ...base,
+      DATABASE_URL: urls.api,
+      SESSION_SECRET: secrets.sessionSecret,
+      ...(existsSync(WEB_DIST) && { WEB_DIR: WEB_DIST }),
+    },
     worker: { ...base, WORKER_DATABASE_URL: urls.worker },
     migrate: { ...base, OWNER_DATABASE_URL: urls.owner },
     verify: { ...base, READER_DATABASE_URL: urls.reader },
-    seed: { ...base, DATABASE_URL: urls.api, OWNER_DATABASE_URL: urls.owner, WORKER_DATABASE_URL: urls.worker },
+    seed: {
+      ...base,
+      DATABASE_URL: urls.api,
+      OWNER_DATABASE_URL: urls.owner,
+      WORKER_DATABASE_URL: urls.worker,
+    },
   };
 }

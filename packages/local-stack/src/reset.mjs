@@ -14,11 +14,18 @@ runCommand(async () => {
   }
   makeStateFolder();
   const holder = takeState('npm run reset');
-  if (holder) throw new Error(`${holder.doing} is at work in this folder (process ${holder.pid}); stop it first.`);
+  if (holder)
+    throw new Error(
+      `${holder.doing} is at work in this folder (process ${holder.pid}); stop it first.`,
+    );
   const lines = createInterface({ input: process.stdin, output: process.stdout });
   const answer = await Promise.race([
-    lines.question(`This takes away the house, all of its books and papers, in ${folders.join(' and ')}.\nType yes to go on: `),
-    new Promise((resolve) => { lines.once('close', () => resolve('')); }),
+    lines.question(
+      `This takes away the house, all of its books and papers, in ${folders.join(' and ')}.\nType yes to go on: `,
+    ),
+    new Promise((resolve) => {
+      lines.once('close', () => resolve(''));
+    }),
   ]);
   lines.close();
   if (answer !== 'yes') {

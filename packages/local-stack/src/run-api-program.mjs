@@ -16,14 +16,22 @@ import { secrets } from './state/secrets.mjs';
 export async function runApiProgram(name) {
   makeStateFolder();
   const holder = takeState(`npm run ${name}`);
-  if (holder && !holder.address) throw new Error(`${holder.doing} is at work in this folder (process ${holder.pid}); try again when it has ended.`);
+  if (holder && !holder.address)
+    throw new Error(
+      `${holder.doing} is at work in this folder (process ${holder.pid}); try again when it has ended.`,
+    );
   if (!holder) await installPackages();
   await build();
   const port = holder?.databasePort ?? (await openDatabase()).port;
   const args = [...programArgs(name), ...process.argv.slice(2)];
   const env = programEnv({ port, secrets: secrets() });
   if (!holder && name !== 'migrate') {
-    await startProcess(process.execPath, programArgs('migrate'), { env: env.migrate, stdio: 'ignore' }).ended;
+    await startProcess(process.execPath, programArgs('migrate'), {
+      env: env.migrate,
+      stdio: 'ignore',
+    }).ended;
   }
-  return (await startProcess(process.execPath, args, { env: env[name], stdio: 'inherit' }).ended) ?? 1;
+  return (
+    (await startProcess(process.execPath, args, { env: env[name], stdio: 'inherit' }).ended) ?? 1
+  );
 }

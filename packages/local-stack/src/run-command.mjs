@@ -10,12 +10,16 @@ const LOOK_EVERY_MS = 250;
 export function runCommand(command) {
   const parent = process.ppid;
   // npm ends without passing a signal on to what it runs.
-  const watch = setInterval(() => { if (process.ppid !== parent) void leave(0); }, LOOK_EVERY_MS);
+  const watch = setInterval(() => {
+    if (process.ppid !== parent) void leave(0);
+  }, LOOK_EVERY_MS);
   watch.unref();
-  for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) process.on(signal, () => void leave(0));
+  for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP']))
+    process.on(signal, () => void leave(0));
   command().then(leave, (error) => {
     if (error instanceof Stopping) return undefined;
-    if (!isLeaving) process.stderr.write(`${error instanceof Error ? error.message : String(error)}\n`);
+    if (!isLeaving)
+      process.stderr.write(`${error instanceof Error ? error.message : String(error)}\n`);
     return leave(1);
   });
 }

@@ -22,7 +22,8 @@ export async function startApi(env, chosen) {
     if (await answers(address, api.ended)) return { ...api, address };
     const words = lastWords('main');
     // Another start may have been faster to this port.
-    if (chosen || !/taken|EADDRINUSE/.test(words)) throw new Error(`The API did not open. ${words}`);
+    if (chosen || !/taken|EADDRINUSE/.test(words))
+      throw new Error(`The API did not open. ${words}`);
   }
 }
 
@@ -34,7 +35,11 @@ export function startWorker(env) {
 /** @param {'main' | 'worker'} name @param {NodeJS.ProcessEnv} env */
 function startLogged(name, env) {
   const log = openSync(logFile(name), 'w', 0o600);
-  const process_ = startProcess(process.execPath, programArgs(name), { env, stdio: ['ignore', log, log], alone: true });
+  const process_ = startProcess(process.execPath, programArgs(name), {
+    env,
+    stdio: ['ignore', log, log],
+    alone: true,
+  });
   closeSync(log);
   return process_;
 }
@@ -52,12 +57,16 @@ function lastWords(name) {
 /** @param {string} address @param {Promise<unknown>} ended */
 async function answers(address, ended) {
   let hasEnded = false;
-  void ended.then(() => { hasEnded = true; });
+  void ended.then(() => {
+    hasEnded = true;
+  });
   const until = Date.now() + OPENS_WITHIN_MS;
   while (!hasEnded && Date.now() < until) {
     const answer = await fetch(`${address}/api/health`).catch(() => null);
     if (answer?.ok) return !hasEnded;
-    await new Promise((resolve) => { setTimeout(resolve, 50); });
+    await new Promise((resolve) => {
+      setTimeout(resolve, 50);
+    });
   }
   return false;
 }

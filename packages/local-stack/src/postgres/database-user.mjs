@@ -13,8 +13,11 @@ export function databaseUser(folder) {
     const { uid, gid } = statSync(folder);
     if (uid !== 0) return { uid, gid, cwd: '/' };
   }
-  const users = readFileSync('/etc/passwd', 'utf8').split('\n').map((line) => line.split(':'));
-  const user = users.find(([name]) => name === 'postgres') ?? users.find(([name]) => name === 'nobody');
+  const users = readFileSync('/etc/passwd', 'utf8')
+    .split('\n')
+    .map((line) => line.split(':'));
+  const user =
+    users.find(([name]) => name === 'postgres') ?? users.find(([name]) => name === 'nobody');
   if (!user) throw new Error('There is no user on this machine that the database could run as.');
   return { uid: Number(user[2]), gid: Number(user[3]), cwd: '/' };
 }

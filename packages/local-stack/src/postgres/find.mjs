@@ -17,7 +17,9 @@ const CREATE_CLUSTER = '/etc/postgresql-common/createcluster.conf';
 export async function findOrInstallPostgres(say, folder = DEBIAN_FOLDER) {
   if (existsSync(join(folder, 'postgres'))) return folder;
   if (process.getuid?.() !== 0) {
-    throw new Error('PostgreSQL 15 is not installed: ask for "apt-get install postgresql-15", or start once as root.');
+    throw new Error(
+      'PostgreSQL 15 is not installed: ask for "apt-get install postgresql-15", or start once as root.',
+    );
   }
   say('Installing PostgreSQL 15 from Debian.');
   // Debian would otherwise make a cluster of its own on 5432.
@@ -27,7 +29,12 @@ export async function findOrInstallPostgres(say, folder = DEBIAN_FOLDER) {
   }
   const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
   await runProgram('apt-get', ['-qq', 'update'], { env });
-  await runProgram('apt-get', ['-qq', '-y', '-o', 'Dpkg::Options::=--force-confold', 'install', 'postgresql-15'], { env });
-  if (!existsSync(join(folder, 'postgres'))) throw new Error('PostgreSQL 15 could not be installed from Debian\'s packages.');
+  await runProgram(
+    'apt-get',
+    ['-qq', '-y', '-o', 'Dpkg::Options::=--force-confold', 'install', 'postgresql-15'],
+    { env },
+  );
+  if (!existsSync(join(folder, 'postgres')))
+    throw new Error("PostgreSQL 15 could not be installed from Debian's packages.");
   return folder;
 }

@@ -31,8 +31,22 @@ export async function makeCluster({ bin, folder, passwords, settings }) {
   for (const path of [folder, passwordFile]) {
     if (user.uid !== undefined && user.gid !== undefined) chownSync(path, user.uid, user.gid);
   }
-  await runProgram(join(bin, 'initdb'), ['-D', join(folder, 'data'), '-U', SUPERUSER, '--auth=scram-sha-256',
-    `--pwfile=${passwordFile}`, '-E', 'UTF8', '--locale=C.UTF-8', '--data-checksums'], user);
+  await runProgram(
+    join(bin, 'initdb'),
+    [
+      '-D',
+      join(folder, 'data'),
+      '-U',
+      SUPERUSER,
+      '--auth=scram-sha-256',
+      `--pwfile=${passwordFile}`,
+      '-E',
+      'UTF8',
+      '--locale=C.UTF-8',
+      '--data-checksums',
+    ],
+    user,
+  );
   rmSync(passwordFile);
   const running = await runCluster({ bin, folder, settings });
   try {
@@ -45,8 +59,23 @@ export async function makeCluster({ bin, folder, passwords, settings }) {
 
 /** @param {string} bin @param {number} port @param {Passwords} passwords */
 async function runInit(bin, port, passwords) {
-  const given = Object.fromEntries(ROLES.map((role) => [`${role.toUpperCase()}_PASSWORD`, passwords[role]]));
-  const args = ['-qXw', '-h', '127.0.0.1', '-p', String(port), '-U', SUPERUSER, '-d', 'postgres', '-f', INIT];
-  await runProgram(join(bin, 'psql'), args,
-    { env: { PATH: process.env.PATH, ...given, PGPASSWORD: passwords[SUPERUSER] } });
+  const given = Object.fromEntries(
+    ROLES.map((role) => [`${role.toUpperCase()}_PASSWORD`, passwords[role]]),
+  );
+  const args = [
+    '-qXw',
+    '-h',
+    '127.0.0.1',
+    '-p',
+    String(port),
+    '-U',
+    SUPERUSER,
+    '-d',
+    'postgres',
+    '-f',
+    INIT,
+  ];
+  await runProgram(join(bin, 'psql'), args, {
+    env: { PATH: process.env.PATH, ...given, PGPASSWORD: passwords[SUPERUSER] },
+  });
 }

@@ -20,9 +20,15 @@ export function guard(pid, signal) {
 }
 
 function startWatcher() {
-  const child = spawn(process.execPath, [WATCH], { stdio: ['pipe', 'ignore', 'ignore'], detached: true, cwd: '/' });
+  const child = spawn(process.execPath, [WATCH], {
+    stdio: ['pipe', 'ignore', 'ignore'],
+    detached: true,
+    cwd: '/',
+  });
   child.unref();
-  const pipe = /** @type {import('node:net').Socket | null} */ (/** @type {unknown} */ (child.stdin));
+  const pipe = /** @type {import('node:net').Socket | null} */ (
+    /** @type {unknown} */ (child.stdin)
+  );
   pipe?.unref();
   // The watcher outlives nobody; a write after its end has nothing left to guard.
   pipe?.on('error', () => undefined);

@@ -26,11 +26,17 @@ let isStopping = false;
  * @param {import('node:child_process').SpawnOptions & Ending} options
  * @returns {Started & { child: import('node:child_process').ChildProcess }}
  */
-export function startProcess(program, args, { endsBy = 'SIGTERM', withinMs = 15_000, alone = false, ...options }) {
+export function startProcess(
+  program,
+  args,
+  { endsBy = 'SIGTERM', withinMs = 15_000, alone = false, ...options },
+) {
   if (isStopping) throw new Stopping();
   const child = spawn(program, args, { ...options, detached: true });
   /** @type {Promise<number | null>} */
-  const ended = new Promise((resolve) => child.once('close', resolve).once('error', () => resolve(null)));
+  const ended = new Promise((resolve) =>
+    child.once('close', resolve).once('error', () => resolve(null)),
+  );
   const { pid } = child;
   if (pid === undefined) throw new Error(`${program} could not be started.`);
   const target = alone ? pid : -pid;
@@ -58,7 +64,9 @@ async function stop({ target, ended, endsBy, withinMs }) {
   send(target, endsBy);
   /** @type {NodeJS.Timeout | undefined} */
   let timer;
-  const late = new Promise((resolve) => { timer = setTimeout(() => resolve('late'), withinMs); });
+  const late = new Promise((resolve) => {
+    timer = setTimeout(() => resolve('late'), withinMs);
+  });
   if ((await Promise.race([ended, late])) === 'late') {
     send(target, 'SIGKILL');
     await ended;

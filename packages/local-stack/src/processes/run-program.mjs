@@ -8,12 +8,22 @@ import { startProcess } from './process.mjs';
  * @returns {Promise<string>}
  */
 export async function runProgram(program, args, options = {}) {
-  const { child, ended } = startProcess(program, args, { stdio: ['ignore', 'pipe', 'pipe'], ...options });
+  const { child, ended } = startProcess(program, args, {
+    stdio: ['ignore', 'pipe', 'pipe'],
+    ...options,
+  });
   let out = '';
   let errors = '';
-  child.stdout?.setEncoding('utf8').on('data', (/** @type {string} */ part) => { out += part; });
-  child.stderr?.setEncoding('utf8').on('data', (/** @type {string} */ part) => { errors += part; });
+  child.stdout?.setEncoding('utf8').on('data', (/** @type {string} */ part) => {
+    out += part;
+  });
+  child.stderr?.setEncoding('utf8').on('data', (/** @type {string} */ part) => {
+    errors += part;
+  });
   const code = await ended;
-  if (code !== 0) throw new Error(`${[program, ...args].join(' ').slice(0, 200)} failed.\n${errors || out}`.trimEnd());
+  if (code !== 0)
+    throw new Error(
+      `${[program, ...args].join(' ').slice(0, 200)} failed.\n${errors || out}`.trimEnd(),
+    );
   return out;
 }

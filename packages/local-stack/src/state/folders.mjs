@@ -9,7 +9,10 @@ import { ROOT } from '../root.mjs';
 export const STATE = join(ROOT, '.foldwell');
 
 /** Where the cluster goes when the database's user cannot get into the clone. */
-export const ELSEWHERE = join('/var/lib', `foldwell-${createHash('sha256').update(ROOT).digest('hex').slice(0, 12)}`);
+export const ELSEWHERE = join(
+  '/var/lib',
+  `foldwell-${createHash('sha256').update(ROOT).digest('hex').slice(0, 12)}`,
+);
 
 /** Makes the state folder, or throws one sentence where this user may not write it. */
 export function makeStateFolder() {

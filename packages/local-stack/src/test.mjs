@@ -1,0 +1,68 @@
+import { existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs';
+import { join } from 'node:path';
+
+import { build } from './build.mjs';
+import { installPackages } from './install.mjs';
+import { findOrInstallPostgres } from './postgres/find.mjs';
+import { startProcess } from './processes/process.mjs';
+import { ROOT, say } from './root.mjs';
+import { runCommand } from './run-command.mjs';
+import { STATE } from './state/folders.mjs';
+
+const VITEST = [
+  'node_modules/vitest/vitest.mjs',
+  'run',
+  '--config',
+  'packages/tooling/vitest.config.ts',
+];
+const PROJECTS = { '--outside': ['outside'], none: ['beside', 'house'] };
+
+/** `npm test`, `test:long` (`--long`) and `test:outside` (`--outside`); other words choose files. */
+runCommand(async () => {
+  await installPackages();
+  await Promise.all([build(), findOrInstallPostgres(say)]);
+  const words = process.argv.slice(2);
+  const chosen = words.includes('--outside') ? PROJECTS['--outside'] : PROJECTS.none;
+  const files = words.filter((word) => !['--outside', '--long'].includes(word));
+  const report = join(STATE, `tests-${process.pid}.json`);
+  mkdirSync(STATE, { recursive: true, mode: 0o755 });
+  const args = [
+    ...VITEST,
+    ...chosen.flatMap((name) => ['--project', name]),
+    ...files,
+    '--reporter=default',
+    '--reporter=json',
+    `--outputFile.json=${report}`,
+  ];
+  const env = { ...process.env, FOLDWELL_FULL: words.includes('--long') ? '1' : '' };
+  const code =
+    (await startProcess(process.execPath, args, {
+      cwd: ROOT,
+      env,
+      stdio: 'inherit',
+      withinMs: 60_000,
+    }).ended) ?? 1;
+  say(count(report, code));
+  rmSync(report, { force: true });
+  return code;
+});
+
+/**
+ * The last line of a run, e.g. `412 passed, 0 failed`. A file that could not be read or set up has no
+ * failed test and is a failure all the same.
+ * @param {string} report @param {number} code of the run
+ */
+function count(report, code) {
+  const { numPassedTests = 0, numFailedTests = 0, testResults = [] } = read(report);
+  const broken = testResults.filter(
+    (/** @type {{ status: string, assertionResults: { status: string }[] }} */ file) =>
+      file.status === 'failed' && file.assertionResults.every(({ status }) => status !== 'failed'),
+  ).length;
+  const failed = numFailedTests + broken;
+  return `${numPassedTests} passed, ${failed === 0 && code !== 0 ? 1 : failed} failed`;
+}
+
+/** @param {string} report nothing where the run did not come to its end */
+function read(report) {
+  return existsSync(report) ? JSON.parse(readFileSync(report, 'utf8')) : {};
+}

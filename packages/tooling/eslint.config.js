@@ -1,0 +1,80 @@
+import js from '@eslint/js';
+import reactHooks from 'eslint-plugin-react-hooks';
+import tseslint from 'typescript-eslint';
+
+import { reasonedDisable } from './src/reasoned-disable.js';
+
+/** @type {import('eslint').Linter.RulesRecord} */
+const SIZES = {
+  'max-lines': ['error', { max: 250, skipBlankLines: true, skipComments: true }],
+  'max-lines-per-function': ['error', { max: 60, skipBlankLines: true, skipComments: true }],
+  'max-params': ['error', 4],
+  complexity: ['error', 10],
+};
+
+/** What needs the types; style and simple mistakes are Biome's. */
+export default tseslint.config(
+  { ignores: ['**/dist/**', '**/dist.*/**', '.tsbuild/**', '.foldwell/**', '**/node_modules/**'] },
+  js.configs.recommended,
+  tseslint.configs.recommendedTypeChecked,
+  {
+    languageOptions: {
+      parserOptions: {
+        projectService: {
+          allowDefaultProject: [
+            'apps/*/*.mjs',
+            'apps/web/vite.config.ts',
+            'packages/tooling/*.js',
+            '.*.cjs',
+          ],
+        },
+      },
+    },
+    linterOptions: { reportUnusedDisableDirectives: 'error' },
+    plugins: { foldwell: { rules: { 'reasoned-disable': reasonedDisable } } },
+    rules: {
+      ...SIZES,
+      'foldwell/reasoned-disable': 'error',
+      'no-warning-comments': 'error',
+      'no-undef': 'off',
+      'no-control-regex': 'off',
+      '@typescript-eslint/restrict-template-expressions': [
+        'error',
+        { allowNumber: true, allowBoolean: true },
+      ],
+      '@typescript-eslint/no-misused-promises': [
+        'error',
+        { checksVoidReturn: { attributes: false } },
+      ],
+    },
+  },
+  { files: ['apps/web/**/*.{ts,tsx}'], ...reactHooks.configs.flat['recommended-latest'] },
+  {
+    // Tests look at answers from outside, whose type is whatever came.
+    files: ['tests/**/*.ts', '**/*.test.{ts,tsx}'],
+    rules: {
+      '@typescript-eslint/no-unsafe-argument': 'off',
+      '@typescript-eslint/no-unsafe-assignment': 'off',
+      '@typescript-eslint/no-unsafe-call': 'off',
+      '@typescript-eslint/no-unsafe-member-access': 'off',
+      '@typescript-eslint/no-unsafe-return': 'off',
+      'max-lines-per-function': 'off',
+    },
+  },
+  {
+    // Plain JavaScript has no way to say what JSON.parse gives.
+    files: ['**/*.{js,mjs,cjs}'],
+    rules: {
+      '@typescript-eslint/no-unsafe-argument': 'off',
+      '@typescript-eslint/no-unsafe-assignment': 'off',
+      '@typescript-eslint/no-unsafe-call': 'off',
+      '@typescript-eslint/no-unsafe-member-access': 'off',
+      '@typescript-eslint/no-unsafe-return': 'off',
+    },
+  },
+  {
+    // The tables and guards read best as whole SQL texts.
+    files: ['apps/api/src/database/migrations/*.ts'],
+    rules: { 'max-lines-per-function': 'off' },
+  },
+);
