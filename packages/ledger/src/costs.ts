@@ -39,11 +39,29 @@ export function writeDown(lot: LotRef, at: PlaceRef, amount: number): Legs {
  * A purchase found at another price later: the difference (positive where it was booked too high)
  * goes by share of weight onto what still lies inside, the rest to expense.
  */
-export function correctCost(lot: LotRef, tooHigh: number, inside: { at: PlaceRef; weight: number }[], gone: number): Legs {
+export function correctCost(
+  lot: LotRef,
+  tooHigh: number,
+  inside: { at: PlaceRef; weight: number }[],
+  gone: number,
+): Legs {
   const legs: Leg[] = [
     { lot, place: { kind: 'supplier' }, ...still, cost: { how: 'given', amount: tooHigh } },
-    ...inside.map(({ at, weight }): Leg => ({ lot, place: at, ...still, cost: { how: 'allotted', pool: 0, weight } })),
+    ...inside.map(
+      ({ at, weight }): Leg => ({
+        lot,
+        place: at,
+        ...still,
+        cost: { how: 'allotted', pool: 0, weight },
+      }),
+    ),
   ];
-  if (gone > 0) legs.push({ lot, place: { kind: 'charges' }, ...still, cost: { how: 'allotted', pool: 0, weight: gone } });
+  if (gone > 0)
+    legs.push({
+      lot,
+      place: { kind: 'charges' },
+      ...still,
+      cost: { how: 'allotted', pool: 0, weight: gone },
+    });
   return { legs, pools: [{ of: [0] }] };
 }

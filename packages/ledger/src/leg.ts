@@ -1,13 +1,32 @@
 /** A lot that stands, by id, or one this act makes, by its ref. */
 export type LotRef = { id: number } | { new: string };
 export type SinglePlace =
-  | 'return desk' | 'quarantine' | 'missing' | 'supplier' | 'sold' | 'loss' | 'charges' | 'conversion';
+  | 'return desk'
+  | 'quarantine'
+  | 'missing'
+  | 'supplier'
+  | 'sold'
+  | 'loss'
+  | 'charges'
+  | 'conversion';
 export type PlaceRef =
-  | { id: number } | { new: string } | { kind: SinglePlace } | { memoOf: number | 'new' } | { keptOf: number };
+  | { id: number }
+  | { new: string }
+  | { kind: SinglePlace }
+  | { memoOf: number | 'new' }
+  | { keptOf: number };
 export type LineRef = { id: number } | { newLine: number };
 export type DifferenceRef = { id: number } | { new: string };
 /** What became of a memo line's carats: a leg on the memo's own place is `sent` or `out`. */
-export type Flow = 'sent' | 'out' | 'returned' | 'kept' | 'converted' | 'missing' | 'written_off' | 'restated';
+export type Flow =
+  | 'sent'
+  | 'out'
+  | 'returned'
+  | 'kept'
+  | 'converted'
+  | 'missing'
+  | 'written_off'
+  | 'restated';
 
 /**
  * How cost goes with a leg. `carried` leaves by share of weight, the last weight taking all; `given`
@@ -15,7 +34,10 @@ export type Flow = 'sent' | 'out' | 'returned' | 'kept' | 'converted' | 'missing
  * sources gave, by largest remainder over integer weights.
  */
 export type CostRule =
-  | { how: 'none' } | { how: 'carried' } | { how: 'given'; amount: number } | { how: 'allotted'; pool: number; weight: number };
+  | { how: 'none' }
+  | { how: 'carried' }
+  | { how: 'given'; amount: number }
+  | { how: 'allotted'; pool: number; weight: number };
 
 /** One side of a movement. Weight in thousandths of a carat and pieces are signed. */
 export interface Leg {

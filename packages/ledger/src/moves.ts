@@ -21,9 +21,17 @@ export function together(...parts: Legs[]): Legs {
   const all: Legs = { legs: [], pools: [] };
   for (const part of parts) {
     const [legsBefore, poolsBefore] = [all.legs.length, all.pools.length];
-    all.pools.push(...part.pools.map((pool) => ({ of: pool.of.map((index) => index + legsBefore) })));
-    all.legs.push(...part.legs.map((leg): Leg =>
-      leg.cost.how === 'allotted' ? { ...leg, cost: { ...leg.cost, pool: leg.cost.pool + poolsBefore } } : leg));
+    all.pools.push(
+      ...part.pools.map((pool) => ({ of: pool.of.map((index) => index + legsBefore) })),
+    );
+    all.legs.push(
+      ...part.legs.map(
+        (leg): Leg =>
+          leg.cost.how === 'allotted'
+            ? { ...leg, cost: { ...leg.cost, pool: leg.cost.pool + poolsBefore } }
+            : leg,
+      ),
+    );
   }
   return all;
 }
@@ -41,11 +49,30 @@ export function move(moved: Move): Legs {
 }
 
 /** Weight found more (positive) or less than booked at a place: no cost goes with it. */
-export function restate(lot: LotRef, at: PlaceRef, found: Quantity, marks: { at?: Mark; loss?: Mark } = {}): Legs {
+export function restate(
+  lot: LotRef,
+  at: PlaceRef,
+  found: Quantity,
+  marks: { at?: Mark; loss?: Mark } = {},
+): Legs {
   return {
     legs: [
-      { lot, place: { kind: 'loss' }, weight: -found.weight, pieces: -found.pieces, cost: { how: 'none' }, ...marks.loss },
-      { lot, place: at, weight: found.weight, pieces: found.pieces, cost: { how: 'none' }, ...marks.at },
+      {
+        lot,
+        place: { kind: 'loss' },
+        weight: -found.weight,
+        pieces: -found.pieces,
+        cost: { how: 'none' },
+        ...marks.loss,
+      },
+      {
+        lot,
+        place: at,
+        weight: found.weight,
+        pieces: found.pieces,
+        cost: { how: 'none' },
+        ...marks.at,
+      },
     ],
     pools: [],
   };

@@ -16,17 +16,31 @@ export type BalanceOf = (lot: LotRef, place: PlaceRef) => Quantity & { cost: num
  * Throws where a pool waits for itself.
  */
 export function reckon({ legs, pools }: Legs, balanceOf: BalanceOf): Posting[] {
-  const costs = legs.map((leg) => (leg.cost.how === 'given' ? leg.cost.amount : leg.cost.how === 'none' ? 0 : null));
+  const costs = legs.map((leg) =>
+    leg.cost.how === 'given' ? leg.cost.amount : leg.cost.how === 'none' ? 0 : null,
+  );
   carry(legs, costs, balanceOf);
   for (const [index, pool] of pools.entries()) {
     const total = -pool.of.reduce((sum, at) => sum + known(costs[at]), 0);
     const members = legs.flatMap((leg, at) =>
-      leg.cost.how === 'allotted' && leg.cost.pool === index ? [{ at, weight: leg.cost.weight }] : []);
-    largestRemainder(total, members.map(({ weight }) => weight)).forEach((cost, member) => {
+      leg.cost.how === 'allotted' && leg.cost.pool === index
+        ? [{ at, weight: leg.cost.weight }]
+        : [],
+    );
+    largestRemainder(
+      total,
+      members.map(({ weight }) => weight),
+    ).forEach((cost, member) => {
       costs[members[member]?.at ?? -1] = cost;
     });
   }
-  return legs.map(({ lot, place, weight, pieces }, at) => ({ lot, place, weight, pieces, cost: known(costs[at]) }));
+  return legs.map(({ lot, place, weight, pieces }, at) => ({
+    lot,
+    place,
+    weight,
+    pieces,
+    cost: known(costs[at]),
+  }));
 }
 
 function carry(legs: Leg[], costs: (number | null)[], balanceOf: BalanceOf): void {
@@ -38,7 +52,11 @@ function carry(legs: Leg[], costs: (number | null)[], balanceOf: BalanceOf): voi
     const leaving = -leg.weight;
     const cost = leaving === held.weight ? held.cost : share(held.cost, leaving, held.weight);
     costs[at] = -cost || 0;
-    left.set(key, { weight: held.weight - leaving, pieces: held.pieces + leg.pieces, cost: held.cost - cost });
+    left.set(key, {
+      weight: held.weight - leaving,
+      pieces: held.pieces + leg.pieces,
+      cost: held.cost - cost,
+    });
   });
 }
 
@@ -49,7 +67,8 @@ function share(cost: number, weight: number, whole: number): number {
 }
 
 function known(cost: number | null | undefined): number {
-  if (cost === null || cost === undefined) throw new Error('a pool waits for a cost that is not reckoned yet');
+  if (cost === null || cost === undefined)
+    throw new Error('a pool waits for a cost that is not reckoned yet');
   return cost;
 }
 
@@ -57,7 +76,10 @@ function known(cost: number | null | undefined): number {
 export function isBalanced(postings: Posting[]): boolean {
   const sums = new Map<string, [number, number, number]>();
   for (const { lot, place, weight, pieces, cost } of postings) {
-    for (const key of [JSON.stringify(lot), ...('kind' in place && place.kind === 'conversion' ? ['conversion'] : [])]) {
+    for (const key of [
+      JSON.stringify(lot),
+      ...('kind' in place && place.kind === 'conversion' ? ['conversion'] : []),
+    ]) {
       const [w, p, c] = sums.get(key) ?? [0, 0, 0];
       sums.set(key, [w + weight, p + pieces, c + cost]);
     }

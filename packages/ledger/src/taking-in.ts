@@ -10,9 +10,15 @@ export interface Arrival extends Quantity {
 
 /** Opening or purchase: carats and cost come in from the supplier, one sum shared by largest remainder. */
 export function buy(total: number, arrivals: Arrival[]): Legs {
-  const parts = largestRemainder(total, arrivals.map((arrival) => arrival.share));
+  const parts = largestRemainder(
+    total,
+    arrivals.map((arrival) => arrival.share),
+  );
   const legs = arrivals.flatMap((arrival, index): Leg[] => [
-    { ...outOf({ kind: 'supplier' }, arrival), cost: { how: 'given', amount: -(parts[index] ?? 0) } },
+    {
+      ...outOf({ kind: 'supplier' }, arrival),
+      cost: { how: 'given', amount: -(parts[index] ?? 0) },
+    },
     { ...into(arrival.to, arrival), cost: { how: 'allotted', pool: index, weight: 1 } },
   ]);
   return { legs, pools: arrivals.map((_, index) => ({ of: [2 * index] })) };
@@ -35,13 +41,34 @@ export function buyFromConsignor(
   const legs: Leg[] = [
     { lot: theirs, place: at, weight: -weight, pieces: -pieces, cost: { how: 'carried' } },
     { lot: theirs, place: { kind: 'conversion' }, weight, pieces, cost: { how: 'none' } },
-    { lot: ours, place: { kind: 'conversion' }, weight: -weight, pieces: -pieces, cost: { how: 'none' } },
-    { lot: ours, place: { kind: 'supplier' }, weight: 0, pieces: 0, cost: { how: 'given', amount: -price } },
+    {
+      lot: ours,
+      place: { kind: 'conversion' },
+      weight: -weight,
+      pieces: -pieces,
+      cost: { how: 'none' },
+    },
+    {
+      lot: ours,
+      place: { kind: 'supplier' },
+      weight: 0,
+      pieces: 0,
+      cost: { how: 'given', amount: -price },
+    },
     { lot: ours, place: to, weight, pieces, cost: { how: 'allotted', pool: 0, weight: 1 } },
   ];
   return { legs, pools: [{ of: [3] }] };
 }
 
-const outOf = (place: PlaceRef, { lot, weight, pieces }: Omit<Arrival, 'share'>) =>
-  ({ lot, place, weight: -weight, pieces: -pieces });
-const into = (place: PlaceRef, { lot, weight, pieces }: Omit<Arrival, 'share'>) => ({ lot, place, weight, pieces });
+const outOf = (place: PlaceRef, { lot, weight, pieces }: Omit<Arrival, 'share'>) => ({
+  lot,
+  place,
+  weight: -weight,
+  pieces: -pieces,
+});
+const into = (place: PlaceRef, { lot, weight, pieces }: Omit<Arrival, 'share'>) => ({
+  lot,
+  place,
+  weight,
+  pieces,
+});
