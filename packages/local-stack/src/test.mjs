@@ -1,7 +1,8 @@
-import { existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs';
+import { existsSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 
 import { build } from './build.mjs';
+import { findOrInstallChromium } from './debian.mjs';
 import { installPackages } from './install.mjs';
 import { findOrInstallPostgres } from './postgres/find.mjs';
 import { startProcess } from './processes/process.mjs';
@@ -20,7 +21,9 @@ const PROJECTS = { '--outside': ['outside'], none: ['beside', 'house'] };
 /** `npm test`, `test:long` (`--long`) and `test:outside` (`--outside`); other words choose files. */
 runCommand(async () => {
   await installPackages();
-  await Promise.all([build(), findOrInstallPostgres(say)]);
+  await findOrInstallPostgres(say);
+  await findOrInstallChromium(say);
+  await build();
   const words = process.argv.slice(2);
   const chosen = words.includes('--outside') ? PROJECTS['--outside'] : PROJECTS.none;
   const files = words.filter((word) => !['--outside', '--long'].includes(word));
@@ -42,13 +45,17 @@ runCommand(async () => {
       stdio: 'inherit',
       withinMs: 60_000,
     }).ended) ?? 1;
-  say(count(report, code));
+  const { passed, failed } = count(report, code);
+  if (process.env.FOLDWELL_REPORT) {
+    writeFileSync(process.env.FOLDWELL_REPORT, JSON.stringify({ passed, failed }));
+  }
+  say(`${passed} passed, ${failed} failed`);
   rmSync(report, { force: true });
   return code;
 });
 
 /**
- * The last line of a run, e.g. `412 passed, 0 failed`. A file that could not be read or set up has no
+ * What the last line of a run says. A file that could not be read or set up has no
  * failed test and is a failure all the same.
  * @param {string} report @param {number} code of the run
  */
@@ -59,7 +66,7 @@ function count(report, code) {
       file.status === 'failed' && file.assertionResults.every(({ status }) => status !== 'failed'),
   ).length;
   const failed = numFailedTests + broken;
-  return `${numPassedTests} passed, ${failed === 0 && code !== 0 ? 1 : failed} failed`;
+  return { passed: numPassedTests, failed: failed === 0 && code !== 0 ? 1 : failed };
 }
 
 /** @param {string} report nothing where the run did not come to its end */

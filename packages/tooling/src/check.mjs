@@ -1,5 +1,5 @@
 import { spawnSync } from 'node:child_process';
-import { readdirSync } from 'node:fs';
+import { readdirSync, writeFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 
 const ROOT = fileURLToPath(new URL('../../../', import.meta.url));
@@ -12,7 +12,15 @@ const projects = ['apps', 'packages'].flatMap((folder) =>
 /** @type {[string, string[]][]} each a name and what Node runs; never bare tsc, which two packages own */
 const steps = [
   ['types', ['node_modules/typescript7/bin/tsc', '-b', ...projects, 'tests']],
-  ['format and lint', ['node_modules/@biomejs/biome/bin/biome', 'check', '--max-diagnostics=200']],
+  [
+    'format and lint',
+    [
+      'node_modules/@biomejs/biome/bin/biome',
+      'check',
+      '--error-on-warnings',
+      '--max-diagnostics=200',
+    ],
+  ],
   [
     'imports',
     [
@@ -31,13 +39,18 @@ const steps = [
 
 const [only] = process.argv.slice(2);
 let failed = 0;
+let passed = 0;
 for (const [name, args] of steps) {
   if (only && !name.includes(only)) continue;
   const began = Date.now();
   const { status } = spawnSync(process.execPath, args, { cwd: ROOT, stdio: 'inherit' });
   const seconds = ((Date.now() - began) / 1000).toFixed(1);
   process.stdout.write(`${status === 0 ? 'ok  ' : 'FAIL'} ${name} (${seconds} s)\n`);
-  if (status !== 0) failed += 1;
+  if (status === 0) passed += 1;
+  else failed += 1;
+}
+if (process.env.FOLDWELL_REPORT) {
+  writeFileSync(process.env.FOLDWELL_REPORT, JSON.stringify({ passed, failed }));
 }
 process.stdout.write(failed === 0 ? 'All checks passed\n' : `${failed} of the checks failed\n`);
 process.exit(failed === 0 ? 0 : 1);

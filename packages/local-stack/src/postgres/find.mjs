@@ -1,7 +1,7 @@
 import { existsSync, mkdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 
-import { runProgram } from '../processes/run-program.mjs';
+import { installFromDebian } from '../debian.mjs';
 
 /** Where Debian keeps PostgreSQL 15; these programs are not on the PATH. */
 const DEBIAN_FOLDER = '/usr/lib/postgresql/15/bin';
@@ -27,13 +27,7 @@ export async function findOrInstallPostgres(say, folder = DEBIAN_FOLDER) {
     mkdirSync('/etc/postgresql-common', { recursive: true });
     writeFileSync(CREATE_CLUSTER, 'create_main_cluster = false\n');
   }
-  const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
-  await runProgram('apt-get', ['-qq', 'update'], { env });
-  await runProgram(
-    'apt-get',
-    ['-qq', '-y', '-o', 'Dpkg::Options::=--force-confold', 'install', 'postgresql-15'],
-    { env },
-  );
+  await installFromDebian(['postgresql-15']);
   if (!existsSync(join(folder, 'postgres')))
     throw new Error("PostgreSQL 15 could not be installed from Debian's packages.");
   return folder;
