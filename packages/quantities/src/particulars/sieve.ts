@@ -36,13 +36,13 @@ export function isInSieveRange({ on, through }: SieveRange, plate: string): bool
 
 /** Reads `+6.5-11`, `-2`, `+11` as two plates; null where they are none, or stand the wrong way round. */
 export function readSieve(text: string): SieveRange | null {
-  if (text.length > 20) return null;
-  const match = /^(?:\+\s*([\d.]+))?\s*(?:[-−–]\s*([\d.]+))?$/.exec(text.trim());
+  const match = /^(?:\+\s*([\d.]+))?\s*(?:[-−–]\s*([\d.]+))?$/.exec(text.slice(0, 20).trim());
   const [on = null, through = null] = [match?.[1], match?.[2]];
-  const [least, most] = [on, through].map((plate) => (plate === null ? null : plateOpening(plate)));
-  if ((on === null && through === null) || (on !== null && least === null)) return null;
-  if (through !== null && most === null) return null;
-  return least != null && most != null && least >= most ? null : { on, through };
+  const plates = [on, through].filter((plate) => plate !== null);
+  const openings = plates.map(plateOpening).filter((opening) => opening !== null);
+  if (plates.length === 0 || openings.length < plates.length) return null;
+  const [least = 0, most = Number.POSITIVE_INFINITY] = openings;
+  return least < most ? { on, through } : null;
 }
 
 /** About what a round of such a diameter (thousandths of a millimetre) weighs, in carats: 0.00369 d³, our own model. */

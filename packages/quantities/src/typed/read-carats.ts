@@ -1,5 +1,5 @@
 import { type MilliCarats, milliCarats, type Step } from '../weights/milli-carats.js';
-import { readDecimal } from './read-decimal.js';
+import { type DecimalRules, readDecimal } from './read-decimal.js';
 import { bad, type Reading, typedText } from './reading.js';
 
 /** A hundred million carats: more than any house holds, and small enough to multiply by prices. */
@@ -9,24 +9,31 @@ const MOST = 100_000_000_000;
 export function readCarats(text: string, step: Step, what = 'Weight'): Reading<MilliCarats> {
   const typed = typedText(text, what);
   if (typed.kind !== 'ok') return typed;
-  const points = /^(.*\d)\s*(pt|pts|points?)\.?$/i.exec(typed.value);
-  const carats = /^(.*\d)\s*(ct|cts|carats?)\.?$/i.exec(typed.value);
-  const bare = points?.[1] ?? carats?.[1] ?? typed.value;
-  const reading = readDecimal(bare, { decimals: points ? 1 : 3, what, isSigned: true });
+  const reading = readDecimal(...withoutUnit(typed.value, what));
   if (reading.kind === 'bad') return reading;
-  const values = reading.kind === 'ok' ? [reading.value] : reading.readings;
-  const fitting = values.filter((value) => value > 0 && value % step === 0 && value <= MOST);
-  const [value] = fitting;
-  if (value === undefined) return bad(whyNone(values, what));
-  if (reading.kind === 'ambiguous' && fitting.length > 1) {
-    return { ...reading, readings: fitting.map(milliCarats) };
+  if (reading.kind === 'ambiguous') {
+    // Also where only one of them fits the step: `1,234` at step 0.01 is hardly a thousand carats.
+    return { ...reading, readings: reading.readings.map(milliCarats) };
   }
-  return { kind: 'ok', value: milliCarats(value) };
+  const why = whyNot(reading.value, step, what);
+  return why === null ? { kind: 'ok', value: milliCarats(reading.value) } : bad(why);
 }
 
-function whyNone(values: readonly number[], what: string): string {
-  if (values.every((value) => value === 0)) return `${what} is zero; it needs carats.`;
-  if (values.some((value) => value < 0)) return `${what} is less than nothing; it needs carats.`;
-  if (values.some((value) => value > MOST)) return `${what} is more than a house can hold.`;
+/** The number alone, and how to read it: points have one decimal where carats have three. */
+function withoutUnit(typed: string, what: string): [string, DecimalRules] {
+  const [, number = typed, unit = 'ct'] =
+    /^(.*\d)\s*(ct|cts|carats?|pt|pts|points?)\.?$/i.exec(typed) ?? [];
+  const isPoints = /^p/i.test(unit);
+  return [
+    number,
+    { decimals: isPoints ? 1 : 3, what, unit: isPoints ? 'pt' : 'ct', isSigned: true },
+  ];
+}
+
+function whyNot(value: number, step: Step, what: string): string | null {
+  if (value === 0) return `${what} is zero; it needs carats.`;
+  if (value < 0) return `${what} is less than nothing; it needs carats.`;
+  if (value > MOST) return `${what} is more than a house can hold.`;
+  if (value % step === 0) return null;
   return `${what} has three decimals; this house’s balance reads to 0.01 ct.`;
 }

@@ -1,4 +1,4 @@
-import { bad, type Reading, sayable, typedText } from './reading.js';
+import { bad, mapReading, type Reading, sayable, typedText } from './reading.js';
 
 /** How a decimal number is read. */
 export interface DecimalRules {
@@ -6,13 +6,15 @@ export interface DecimalRules {
   decimals: number;
   /** What the number is, for the sentences: `Weight`. */
   what: string;
+  /** Stands behind the numbers in the sentences: `ct`. */
+  unit?: string;
   /** Whether a minus or plus may stand before it. */
   isSigned?: boolean;
   /** Three digits after a lone point may be a thousands mark too: money is written `1.234` by some. */
   pointMayGroup?: boolean;
 }
 
-const SIGN = /^[-+−–]/;
+const SIGNED = /^([-+−–]?)\s*(.*)$/s;
 // Far under 2^53, so that a sum of thousands of them is still exact.
 const MOST_UNITS = 1e15;
 
@@ -22,38 +24,37 @@ const MOST_UNITS = 1e15;
  * ambiguous where it can be both.
  */
 export function readDecimal(text: string, rules: DecimalRules): Reading<number> {
-  const { what, decimals, isSigned = false } = rules;
+  const { what, isSigned } = rules;
   const typed = typedText(text, what);
   if (typed.kind !== 'ok') return typed;
-  const signed = SIGN.test(typed.value);
-  const isLess = signed && typed.value[0] !== '+';
-  const bare = signed ? typed.value.slice(1).trimStart() : typed.value;
+  const [, sign = '', bare = ''] = SIGNED.exec(typed.value) ?? [];
   const shapes = asWritten(bare, rules);
   if (shapes === null) {
     return bad(`${what} reads “${sayable(typed.value)}”; a number is needed.`);
   }
-  if (signed && !isSigned) return bad(`${what} has a sign before it; write the number alone.`);
+  if (sign && !isSigned) return bad(`${what} has a sign before it; write the number alone.`);
   if (shapes.length === 0) {
     return bad(`${what} reads “${bare}”; its points, commas and spaces don't make one number.`);
   }
+  const reading = valuesOf(shapes, bare, rules);
+  return /[-−–]/.test(sign) ? mapReading(reading, (value) => -value || 0) : reading;
+}
+
+/** What the shapes are worth: one value, two to ask about, or why none can be kept. */
+function valuesOf(shapes: readonly Shape[], bare: string, rules: DecimalRules): Reading<number> {
+  const { what, decimals, unit } = rules;
   const values = shapes.map((shape) => toUnits(shape, decimals));
-  const good = [...new Set(values.filter((value) => typeof value === 'number'))];
-  const readings = good.map((value) => (isLess ? -value || 0 : value));
+  const readings = [...new Set(values.filter((value) => typeof value === 'number'))];
   const [one, other] = readings;
   if (one === undefined) {
-    return bad(
-      values[0] === 'too fine'
-        ? `${what} “${bare}” ${tooFineWords(decimals)}.`
-        : `${what} “${bare}” is more than can be kept exactly.`,
-    );
+    const why =
+      values[0] === 'too fine' ? tooFineWords(decimals) : 'is more than can be kept exactly';
+    return bad(`${what} “${bare}” ${why}.`);
   }
   if (other === undefined) return { kind: 'ok', value: one };
-  const [first, second] = good.map((value) => plain(value, decimals));
-  return {
-    kind: 'ambiguous',
-    readings,
-    why: `${what} “${bare}” can be ${first} or ${second}. Write it so that it can be only one.`,
-  };
+  const said = readings.map((value) => `${plain(value, decimals)}${unit ? ` ${unit}` : ''}`);
+  const why = `${what} “${bare}” can be ${said.join(' or ')}. Write it so that it can be only one.`;
+  return { kind: 'ambiguous', readings, why };
 }
 
 /** Digits before and after the decimal mark. */

@@ -5,7 +5,11 @@ import { bad, type Reading, typedText } from './reading.js';
 export function readMillimetres(text: string, what = 'Measurement'): Reading<number> {
   const typed = typedText(text, what);
   if (typed.kind !== 'ok') return typed;
-  const reading = readDecimal(typed.value.replace(/\s*mm$/i, ''), { decimals: 3, what });
+  const reading = readDecimal(typed.value.replace(/\s*mm$/i, ''), {
+    decimals: 3,
+    what,
+    unit: 'mm',
+  });
   if (reading.kind === 'bad') return reading;
   const values = reading.kind === 'ok' ? [reading.value] : reading.readings;
   const fitting = values.filter((value) => value >= 100 && value <= 200_000);

@@ -9,24 +9,36 @@ import { bad, mapReading, type Reading, typedText } from './reading.js';
 export function readMoney(text: string, currency: string, what = 'Amount'): Reading<MinorUnits> {
   const typed = typedText(text, what);
   if (typed.kind !== 'ok') return typed;
-  const named = /^(.*\d)\s*([A-Za-z]{3})$/.exec(typed.value);
-  const code = named?.[2]?.toUpperCase() ?? currency;
-  if (code !== currency) return bad(`${what} is in ${code}; ${currency} is needed here.`);
-  const decimals = minorDigits(currency);
-  const bare = named?.[1] ?? typed.value;
-  // A comma before exactly three digits is a thousands mark where the currency has fewer decimals.
-  const joined = decimals < 3 ? bare.replace(/^([1-9]\d{0,2}),(\d{3})$/, '$1$2') : bare;
-  const reading = readDecimal(joined, { decimals, what, isSigned: true, pointMayGroup: true });
-  if (reading.kind === 'bad') return reading;
-  const values = reading.kind === 'ok' ? [reading.value] : reading.readings;
-  if (values.some((value) => value < 0)) return bad(`${what} is less than nothing.`);
-  // `1.234` of a currency with cents is neither surely a thousand nor surely a slip of the hand.
-  if (reading.kind === 'ok' && decimals < 3 && /^[1-9]\d{0,2}\.\d{3}$/.test(bare)) {
-    return bad(
-      `${what} “${bare}” has three digits after its point. Write it without thousands marks.`,
-    );
+  const [, bare = typed.value, code = currency] =
+    /^(.*\d)\s*([A-Za-z]{3})$/.exec(typed.value) ?? [];
+  if (code.toUpperCase() !== currency) {
+    return bad(`${what} is in ${code.toUpperCase()}; ${currency} is needed here.`);
   }
-  return mapReading(reading, minorUnits);
+  const reading =
+    minorDigits(currency) < 3 ? readGrouped(bare, currency, what) : readPlain(bare, currency, what);
+  const isLess = reading.kind === 'ok' && reading.value < 0;
+  return isLess ? bad(`${what} is less than nothing.`) : mapReading(reading, minorUnits);
+}
+
+function readPlain(
+  bare: string,
+  currency: string,
+  what: string,
+  pointMayGroup = false,
+): Reading<number> {
+  const decimals = minorDigits(currency);
+  return readDecimal(bare, { decimals, what, unit: currency, isSigned: true, pointMayGroup });
+}
+
+/** Where a currency has fewer than three decimals, three digits after a comma are thousands. */
+function readGrouped(bare: string, currency: string, what: string): Reading<number> {
+  const joined = bare.replace(/^([1-9]\d{0,2}),(\d{3})$/, '$1$2');
+  const reading = readPlain(joined, currency, what, true);
+  // After a point they are neither surely a thousand nor surely a slip of the hand.
+  if (reading.kind !== 'ok' || !/^[1-9]\d{0,2}\.\d{3}$/.test(bare)) return reading;
+  return bad(
+    `${what} “${bare}” has three digits after its point. Write it without thousands marks.`,
+  );
 }
 
 /** Reads a price per carat (`420`, `@420`, `6,450 USD/ct`) into minor units. */

@@ -7,13 +7,19 @@ export function readPercent(text: string, what = 'Percentage'): Reading<Hundredt
   const typed = typedText(text, what);
   if (typed.kind !== 'ok') return typed;
   if (/^(flat|even)$/i.test(typed.value)) return { kind: 'ok', value: hundredthsPercent(0) };
-  const [, bare = '', word = ''] =
-    /^(.*?)\s*(?:%\s*)?(back|under|over)?$/i.exec(typed.value.replace(/\s*%$/, '')) ?? [];
-  const reading = readDecimal(bare, { decimals: 2, what, isSigned: word === '' });
-  if (reading.kind !== 'ok') return mapReading(reading, hundredthsPercent);
-  const value = /back|under/i.test(word) ? -reading.value || 0 : reading.value;
-  if (value <= -10_000)
+  const [, bare = '', word = ''] = /^(.*?)\s*%?\s*(back|under|over)?$/i.exec(typed.value) ?? [];
+  const reading = readDecimal(bare, { decimals: 2, what, unit: '%', isSigned: word === '' });
+  const isUnder = /back|under/i.test(word);
+  const signed = mapReading(reading, (value) => (isUnder ? -value || 0 : value));
+  return signed.kind === 'ok'
+    ? withinReason(signed.value, what)
+    : mapReading(signed, hundredthsPercent);
+}
+
+function withinReason(value: number, what: string): Reading<HundredthsPercent> {
+  if (value <= -10_000) {
     return bad(`${what} takes the whole price away; more than −100 % is needed.`);
+  }
   if (value > 100_000) return bad(`${what} is over 1,000 %.`);
   return { kind: 'ok', value: hundredthsPercent(value) };
 }

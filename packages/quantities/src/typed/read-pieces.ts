@@ -5,7 +5,7 @@ import { bad, mapReading, type Reading, typedText } from './reading.js';
 const MOST = 1_000_000_000;
 
 /** Reads a count of stones (`13`, `13p`, `13 pcs`, `1,151`), at least one. */
-export function readPieces(text: string, what = 'Pieces'): Reading<Pieces> {
+export function readPieces(text: string, what = 'Count'): Reading<Pieces> {
   const typed = typedText(text, what);
   if (typed.kind !== 'ok') return typed;
   const named = /^(.*\d)\s*(p|pc|pcs|pieces?|stones?)\.?$/i.exec(typed.value);
