@@ -1,62 +1,107 @@
-import type { Leg, Legs, LotRef, PlaceRef, Quantity } from './leg.js';
+import { exactInteger } from '@foldwell/quantities';
+
+import type { Leg, Legs, LotRef, Mark, PlaceRef, Quantity } from './leg.js';
+import { allotted, CARRIED, less, NO_COST } from './moves.js';
+import type { ConversionWord, Movement } from './movement.js';
 
 /** What goes into a conversion, from where, and what of it is lost on the way. */
 export interface Source extends Quantity {
   lot: LotRef;
   from: PlaceRef;
-  loss?: Quantity & {
-    /** Above tolerance the loss takes its share of cost as expense. */ takesCost: boolean;
-  };
+  loss?: Loss;
+  /** Where it lies on a memo: its line, with the flow `converted`. */
+  mark?: Mark;
 }
 
-/** What comes out; `share` allots cost: its weight, or weight times worth per carat. */
+/** Lost in sorting; above tolerance the loss takes its share of cost as expense. */
+export interface Loss extends Quantity {
+  takesCost: boolean;
+}
+
+/** What comes out; `share` allots cost: its weight, or `worthShare`. */
 export interface Part extends Quantity {
   lot: LotRef;
   to: PlaceRef;
   share: number;
+  /** Where it stays on a memo: its new line, with the flow `sent`. */
+  mark?: Mark;
+}
+
+/** What a part weighs times what it is thought to fetch per carat, to allot cost by relative value. */
+export function worthShare(weight: number, worthPerCarat: number): number {
+  return exactInteger(weight * worthPerCarat, 'worth of a part');
+}
+
+/** How many lots go into and come out of each conversion. */
+const SHAPES: Record<ConversionWord, { sources: 'one' | 'many'; parts: 'one' | 'many' }> = {
+  split: { sources: 'one', parts: 'many' },
+  pick: { sources: 'one', parts: 'many' },
+  mix: { sources: 'many', parts: 'one' },
+  sort: { sources: 'one', parts: 'many' },
+  'test result': { sources: 'one', parts: 'many' },
+  make: { sources: 'many', parts: 'one' },
+  break: { sources: 'one', parts: 'many' },
+};
+
+/**
+ * One or several lots become others. Throws a RangeError where the parts and the losses don't make
+ * the whole, or the word doesn't fit: callers have judged what a person typed before.
+ */
+export function conversion(word: ConversionWord, sources: Source[], parts: Part[]): Movement {
+  const shape = SHAPES[word];
+  if (shape.sources === 'one' && sources.length !== 1)
+    throw new RangeError(`a ${word} has one lot`);
+  if (shape.parts === 'one' && parts.length !== 1) throw new RangeError(`a ${word} makes one lot`);
+  return { kind: 'conversion', word, ...convert(sources, parts) };
 }
 
 /**
- * One or several lots become others: split, pick, mix, sort, test result, make, break. What goes in
- * passes the conversion place whole, what comes out shares its cost by largest remainder.
+ * What goes in passes the conversion place whole, what comes out shares its cost by largest
+ * remainder (by weight where no share says anything).
  */
 export function convert(sources: Source[], parts: Part[]): Legs {
-  const legs: Leg[] = [];
-  const pools: Legs['pools'] = [];
-  const given: number[] = [];
-  for (const { lot, from, weight, pieces, loss } of sources) {
-    const pool = pools.push({ of: [legs.length] }) - 1;
-    const [lost, lostPieces] = [loss?.weight ?? 0, loss?.pieces ?? 0];
-    legs.push({ lot, place: from, weight: -weight, pieces: -pieces, cost: { how: 'carried' } });
-    given.push(legs.length);
-    legs.push({
-      lot,
-      place: { kind: 'conversion' },
-      weight: weight - lost,
-      pieces: pieces - lostPieces,
-      cost: { how: 'allotted', pool, weight: loss?.takesCost ? weight - lost : 1 },
-    });
-    if (loss) {
-      legs.push({
-        lot,
-        place: { kind: 'loss' },
-        weight: lost,
-        pieces: lostPieces,
-        cost: loss.takesCost ? { how: 'allotted', pool, weight: lost } : { how: 'none' },
-      });
-    }
+  assertWhole(sources, parts, 'weight');
+  assertWhole(sources, parts, 'pieces');
+  const into: Legs = { legs: [], pools: [] };
+  for (const source of sources) goIn(source, into);
+  const passed = into.legs.flatMap(({ place }, at) => (isConversion(place) ? [at] : []));
+  const shared = into.pools.push({ of: passed }) - 1;
+  const isSaid = parts.some(({ share }) => share > 0);
+  for (const part of parts) {
+    comeOut(part, isSaid ? allotted(shared, part.share) : allotted(shared, part.weight), into);
   }
-  const shared = pools.push({ of: given }) - 1;
-  for (const { lot, to, weight, pieces, share } of parts) {
-    const pool = pools.push({ of: [legs.length] }) - 1;
-    legs.push({
-      lot,
-      place: { kind: 'conversion' },
-      weight: -weight,
-      pieces: -pieces,
-      cost: { how: 'allotted', pool: shared, weight: share },
-    });
-    legs.push({ lot, place: to, weight, pieces, cost: { how: 'allotted', pool, weight: 1 } });
-  }
-  return { legs, pools };
+  return into;
+}
+
+const isConversion = (place: PlaceRef) => 'kind' in place && place.kind === 'conversion';
+
+function goIn({ lot, from, weight, pieces, loss, mark }: Source, into: Legs): void {
+  const lost: Loss = loss ?? { weight: 0, pieces: 0, takesCost: false };
+  const passes = { weight: weight - lost.weight, pieces: pieces - lost.pieces };
+  const pool = into.pools.push({ of: [into.legs.length] }) - 1;
+  const share = (part: number) => allotted(pool, lost.takesCost ? part : 1);
+  into.legs.push(
+    { lot, place: from, ...less({ weight, pieces }), cost: CARRIED, ...mark },
+    { lot, place: { kind: 'conversion' }, ...passes, cost: share(passes.weight) },
+  );
+  if (loss) into.legs.push(lossLeg(lot, loss, lost.takesCost ? share(loss.weight) : NO_COST));
+}
+
+function lossLeg(lot: LotRef, { weight, pieces }: Loss, cost: Leg['cost']): Leg {
+  return { lot, place: { kind: 'loss' }, weight, pieces, cost };
+}
+
+function comeOut({ lot, to, weight, pieces, mark }: Part, cost: Leg['cost'], into: Legs): void {
+  const pool = into.pools.push({ of: [into.legs.length] }) - 1;
+  const goods = { weight, pieces };
+  into.legs.push(
+    { lot, place: { kind: 'conversion' }, ...less(goods), cost },
+    { lot, place: to, ...goods, cost: allotted(pool), ...mark },
+  );
+}
+
+function assertWhole(sources: Source[], parts: Part[], measure: keyof Quantity): void {
+  const whole = sources.reduce((sum, one) => sum + one[measure] - (one.loss?.[measure] ?? 0), 0);
+  const made = parts.reduce((sum, part) => sum + part[measure], 0);
+  if (whole !== made) throw new RangeError(`the parts make ${made} of ${whole} in ${measure}`);
 }

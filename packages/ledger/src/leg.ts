@@ -1,5 +1,7 @@
 /** A lot that stands, by id, or one this act makes, by its ref. */
 export type LotRef = { id: number } | { new: string };
+
+/** Places of which the house has one. */
 export type SinglePlace =
   | 'return desk'
   | 'quarantine'
@@ -9,14 +11,18 @@ export type SinglePlace =
   | 'loss'
   | 'charges'
   | 'conversion';
+
+/** A place by id, one this act makes, one of its kind, or the memo or kept place of a memo. */
 export type PlaceRef =
   | { id: number }
   | { new: string }
   | { kind: SinglePlace }
   | { memoOf: number | 'new' }
   | { keptOf: number };
+
 export type LineRef = { id: number } | { newLine: number };
 export type DifferenceRef = { id: number } | { new: string };
+
 /** What became of a memo line's carats: a leg on the memo's own place is `sent` or `out`. */
 export type Flow =
   | 'sent'
@@ -31,7 +37,7 @@ export type Flow =
 /**
  * How cost goes with a leg. `carried` leaves by share of weight, the last weight taking all; `given`
  * is a signed sum in minor units on a boundary place; `allotted` legs share what their pool's
- * sources gave, by largest remainder over integer weights.
+ * sources gave, by largest remainder over integer weights, ties to the first leg.
  */
 export type CostRule =
   | { how: 'none' }
@@ -39,16 +45,20 @@ export type CostRule =
   | { how: 'given'; amount: number }
   | { how: 'allotted'; pool: number; weight: number };
 
+/** The memo line and the difference a leg hangs on. */
+export interface Mark {
+  line?: LineRef;
+  flow?: Flow;
+  difference?: DifferenceRef;
+}
+
 /** One side of a movement. Weight in thousandths of a carat and pieces are signed. */
-export interface Leg {
+export interface Leg extends Mark {
   lot: LotRef;
   place: PlaceRef;
   weight: number;
   pieces: number;
   cost: CostRule;
-  line?: LineRef;
-  flow?: Flow;
-  difference?: DifferenceRef;
 }
 
 /** Legs and their pools, as the database's writer takes them; `of` are indices of source legs. */
@@ -57,8 +67,15 @@ export interface Legs {
   pools: { of: number[] }[];
 }
 
-/** A weight and the pieces that go with it. */
+/** A weight (thousandths of a carat) and the pieces that go with it. */
 export interface Quantity {
   weight: number;
   pieces: number;
+}
+
+/** A leg with the cost it will have, in minor units. */
+export interface Posting extends Quantity {
+  lot: LotRef;
+  place: PlaceRef;
+  cost: number;
 }

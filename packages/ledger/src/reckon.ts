@@ -1,38 +1,21 @@
-import { halfAwayFromZero, largestRemainder } from '@foldwell/quantities';
-import type { Leg, Legs, LotRef, PlaceRef, Quantity } from './leg.js';
+import { largestRemainder } from '@foldwell/quantities';
 
-/** A leg with the cost it will have, in minor units. */
-export interface Posting extends Quantity {
-  lot: LotRef;
-  place: PlaceRef;
-  cost: number;
-}
+import type { Leg, Legs, LotRef, PlaceRef, Posting, Quantity } from './leg.js';
+import { shareOfCost } from './share-of-cost.js';
 
-/** What a lot has at a place, for a preview. */
-export type BalanceOf = (lot: LotRef, place: PlaceRef) => Quantity & { cost: number };
+/** What a lot has at an inside place, for a preview; null for a boundary place, which never runs out. */
+export type BalanceOf = (lot: LotRef, place: PlaceRef) => (Quantity & { cost: number }) | null;
 
 /**
  * What the writer would post, for previews and tests: the same rules, on balances as last read.
- * Throws where a pool waits for itself.
+ * Throws a RangeError where more leaves a place than is there, an Error where a pool waits for itself.
  */
 export function reckon({ legs, pools }: Legs, balanceOf: BalanceOf): Posting[] {
-  const costs = legs.map((leg) =>
-    leg.cost.how === 'given' ? leg.cost.amount : leg.cost.how === 'none' ? 0 : null,
-  );
+  const costs = legs.map(costKnownAtOnce);
   carry(legs, costs, balanceOf);
   for (const [index, pool] of pools.entries()) {
     const total = -pool.of.reduce((sum, at) => sum + known(costs[at]), 0);
-    const members = legs.flatMap((leg, at) =>
-      leg.cost.how === 'allotted' && leg.cost.pool === index
-        ? [{ at, weight: leg.cost.weight }]
-        : [],
-    );
-    largestRemainder(
-      total,
-      members.map(({ weight }) => weight),
-    ).forEach((cost, member) => {
-      costs[members[member]?.at ?? -1] = cost;
-    });
+    share(membersOf(legs, index), total, costs);
   }
   return legs.map(({ lot, place, weight, pieces }, at) => ({
     lot,
@@ -43,46 +26,46 @@ export function reckon({ legs, pools }: Legs, balanceOf: BalanceOf): Posting[] {
   }));
 }
 
-function carry(legs: Leg[], costs: (number | null)[], balanceOf: BalanceOf): void {
-  const left = new Map<string, Quantity & { cost: number }>();
-  legs.forEach((leg, at) => {
-    if (leg.cost.how !== 'carried') return;
-    const key = JSON.stringify([leg.lot, leg.place]);
-    const held = left.get(key) ?? { ...balanceOf(leg.lot, leg.place) };
-    const leaving = -leg.weight;
-    const cost = leaving === held.weight ? held.cost : share(held.cost, leaving, held.weight);
-    costs[at] = -cost || 0;
-    left.set(key, {
-      weight: held.weight - leaving,
-      pieces: held.pieces + leg.pieces,
-      cost: held.cost - cost,
-    });
-  });
+function costKnownAtOnce({ cost, weight }: Leg): number | null {
+  if (cost.how === 'given') return cost.amount;
+  return cost.how === 'none' || (cost.how === 'carried' && weight === 0) ? 0 : null;
 }
 
-/** Cost of a part by share of weight, half away from zero. */
-function share(cost: number, weight: number, whole: number): number {
-  if (weight === 0) return 0;
-  return Number(halfAwayFromZero(BigInt(cost) * BigInt(weight), BigInt(whole)));
+/** Cost leaves by share of weight in the order of the legs; what restates a weight leaves its cost. */
+function carry(legs: Leg[], costs: (number | null)[], balanceOf: BalanceOf): void {
+  const left = new Map<string, { weight: number; cost: number }>();
+  for (const [at, { lot, place, weight, cost }] of legs.entries()) {
+    if (weight >= 0) continue;
+    const key = JSON.stringify([lot, place]);
+    const held = left.get(key) ?? balanceOf(lot, place);
+    if (held === null) continue;
+    const leaves = shareOfCost(held.cost, -weight, held.weight);
+    if (cost.how === 'carried') costs[at] = -leaves || 0;
+    const costLeft = cost.how === 'carried' ? held.cost - leaves : held.cost;
+    left.set(key, { weight: held.weight + weight, cost: costLeft });
+  }
+}
+
+interface Member {
+  at: number;
+  weight: number;
+}
+
+function membersOf(legs: Leg[], pool: number): Member[] {
+  return legs.flatMap(({ cost }, at) =>
+    cost.how === 'allotted' && cost.pool === pool ? [{ at, weight: cost.weight }] : [],
+  );
+}
+
+function share(members: Member[], total: number, costs: (number | null)[]): void {
+  const weights = members.map(({ weight }) => weight);
+  const parts = largestRemainder(total, weights);
+  for (const [index, { at }] of members.entries()) costs[at] = parts[index] ?? 0;
 }
 
 function known(cost: number | null | undefined): number {
-  if (cost === null || cost === undefined)
+  if (cost === null || cost === undefined) {
     throw new Error('a pool waits for a cost that is not reckoned yet');
-  return cost;
-}
-
-/** Every lot of a movement sums to zero in weight, pieces and cost, and the conversion place over all lots. */
-export function isBalanced(postings: Posting[]): boolean {
-  const sums = new Map<string, [number, number, number]>();
-  for (const { lot, place, weight, pieces, cost } of postings) {
-    for (const key of [
-      JSON.stringify(lot),
-      ...('kind' in place && place.kind === 'conversion' ? ['conversion'] : []),
-    ]) {
-      const [w, p, c] = sums.get(key) ?? [0, 0, 0];
-      sums.set(key, [w + weight, p + pieces, c + cost]);
-    }
   }
-  return [...sums.values()].every((sum) => sum.every((part) => part === 0));
+  return cost;
 }

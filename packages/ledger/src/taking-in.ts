@@ -1,5 +1,7 @@
 import { largestRemainder } from '@foldwell/quantities';
+
 import type { Leg, Legs, LotRef, PlaceRef, Quantity } from './leg.js';
+import { allotted, given, less, move, NO_COST } from './moves.js';
 
 export interface Arrival extends Quantity {
   lot: LotRef;
@@ -8,67 +10,36 @@ export interface Arrival extends Quantity {
   share: number;
 }
 
-/** Opening or purchase: carats and cost come in from the supplier, one sum shared by largest remainder. */
+/**
+ * Opening or purchase: carats and cost come in from the supplier, one sum (minor units) shared by
+ * largest remainder; by carats where no share says anything.
+ */
 export function buy(total: number, arrivals: Arrival[]): Legs {
-  const parts = largestRemainder(
-    total,
-    arrivals.map((arrival) => arrival.share),
-  );
-  const legs = arrivals.flatMap((arrival, index): Leg[] => [
+  const isSaid = arrivals.some(({ share }) => share > 0);
+  const shares = arrivals.map(({ share, weight }) => (isSaid ? share : weight));
+  const parts = largestRemainder(total, shares);
+  const legs = arrivals.flatMap(({ lot, to, weight, pieces }, index): Leg[] => [
     {
-      ...outOf({ kind: 'supplier' }, arrival),
-      cost: { how: 'given', amount: -(parts[index] ?? 0) },
+      lot,
+      place: { kind: 'supplier' },
+      ...less({ weight, pieces }),
+      cost: given(-(parts[index] ?? 0) || 0),
     },
-    { ...into(arrival.to, arrival), cost: { how: 'allotted', pool: index, weight: 1 } },
+    { lot, place: to, weight, pieces, cost: allotted(index) },
   ]);
   return { legs, pools: arrivals.map((_, index) => ({ of: [2 * index] })) };
 }
 
 /** Consignment in: carats come in from the consignor's memo, without cost. */
 export function consignIn(from: PlaceRef, arrivals: Omit<Arrival, 'share'>[]): Legs {
-  const legs = arrivals.flatMap((arrival): Leg[] => [
-    { ...outOf(from, arrival), cost: { how: 'none' } },
-    { ...into(arrival.to, arrival), cost: { how: 'none' } },
+  const legs = arrivals.flatMap(({ lot, to, weight, pieces }): Leg[] => [
+    { lot, place: from, ...less({ weight, pieces }), cost: NO_COST },
+    { lot, place: to, weight, pieces, cost: NO_COST },
   ]);
   return { legs, pools: [] };
 }
 
-/** A consignor's goods bought where they lie (or on their way to `sold`): his lot becomes one of ours at the agreed price. */
-export function buyFromConsignor(
-  bought: Quantity & { theirs: LotRef; ours: LotRef; at: PlaceRef; to: PlaceRef; price: number },
-): Legs {
-  const { theirs, ours, at, to, weight, pieces, price } = bought;
-  const legs: Leg[] = [
-    { lot: theirs, place: at, weight: -weight, pieces: -pieces, cost: { how: 'carried' } },
-    { lot: theirs, place: { kind: 'conversion' }, weight, pieces, cost: { how: 'none' } },
-    {
-      lot: ours,
-      place: { kind: 'conversion' },
-      weight: -weight,
-      pieces: -pieces,
-      cost: { how: 'none' },
-    },
-    {
-      lot: ours,
-      place: { kind: 'supplier' },
-      weight: 0,
-      pieces: 0,
-      cost: { how: 'given', amount: -price },
-    },
-    { lot: ours, place: to, weight, pieces, cost: { how: 'allotted', pool: 0, weight: 1 } },
-  ];
-  return { legs, pools: [{ of: [3] }] };
+/** Goods back to their supplier, at their cost, or to their consignor's memo, which carries none. */
+export function giveBack(lot: LotRef, from: PlaceRef, to: PlaceRef, goods: Quantity): Legs {
+  return move({ lot, from, to, ...goods });
 }
-
-const outOf = (place: PlaceRef, { lot, weight, pieces }: Omit<Arrival, 'share'>) => ({
-  lot,
-  place,
-  weight: -weight,
-  pieces: -pieces,
-});
-const into = (place: PlaceRef, { lot, weight, pieces }: Omit<Arrival, 'share'>) => ({
-  lot,
-  place,
-  weight,
-  pieces,
-});

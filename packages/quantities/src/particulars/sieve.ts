@@ -36,7 +36,7 @@ export function isInSieveRange({ on, through }: SieveRange, plate: string): bool
 
 /** Reads `+6.5-11`, `-2`, `+11` as two plates; null where they are none, or stand the wrong way round. */
 export function readSieve(text: string): SieveRange | null {
-  const match = /^(?:\+\s*([\d.]+))?\s*(?:[-−–]\s*([\d.]+))?$/.exec(text.slice(0, 20).trim());
+  const match = /^(?=.{1,20}$)(?:\+\s*([\d.]+))?\s*(?:[-−–]\s*([\d.]+))?$/.exec(text.trim());
   const [on = null, through = null] = [match?.[1], match?.[2]];
   const plates = [on, through].filter((plate) => plate !== null);
   const openings = plates.map(plateOpening).filter((opening) => opening !== null);
