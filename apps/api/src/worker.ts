@@ -3,6 +3,8 @@ import { Client } from 'pg';
 import { setting } from './config/config.js';
 import { log } from './http/log.js';
 
+// Read before anything else: without it the process does not start.
+const url = setting('WORKER_DATABASE_URL');
 const RESTS_MS = 1000;
 const AWAY_MS = 3000;
 
@@ -24,7 +26,7 @@ for (const signal of ['SIGTERM', 'SIGINT'] as const) {
 
 /** Seals what waits, first at once and then every second; rests longer while the database is away. */
 async function seal(): Promise<void> {
-  const client = new Client({ connectionString: setting('WORKER_DATABASE_URL'), connectionTimeoutMillis: 3000 });
+  const client = new Client({ connectionString: url, connectionTimeoutMillis: 3000 });
   client.on('error', () => undefined);
   try {
     await client.connect();

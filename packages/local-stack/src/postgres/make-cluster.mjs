@@ -26,7 +26,8 @@ export async function makeCluster({ bin, folder, passwords, settings }) {
   rmSync(folder, { recursive: true, force: true });
   const user = databaseUser();
   const passwordFile = join(folder, 'superuser');
-  mkdirSync(folder, { recursive: true, mode: 0o700 });
+  mkdirSync(dirname(folder), { recursive: true, mode: 0o755 });
+  mkdirSync(folder, { mode: 0o700 });
   writeFileSync(passwordFile, `${passwords[SUPERUSER]}\n`, { mode: 0o600 });
   for (const path of [folder, passwordFile]) {
     if (user.uid !== undefined && user.gid !== undefined) chownSync(path, user.uid, user.gid);
