@@ -10,7 +10,7 @@ import { ABSOLUTE_MS } from './session.js';
 const SIGNED_OUT: Asker = { id: '0', name: '', roles: [], seesCost: false };
 
 /** Routes that a person with a first password may reach before changing it. */
-const BEFORE_CHANGE = new Set(['/api/me', '/api/password', '/api/sign-out']);
+const BEFORE_CHANGE = new Set(['/me', '/password', '/sign-out']);
 
 /** Who asks, read from the database at each request, so that a change of role or a disabling acts at once. */
 export async function askerOf(req: Request, db: DataSource): Promise<Asker | null> {

@@ -1,0 +1,130 @@
+import { createContext, type ReactNode, useContext, useEffect, useMemo, useRef, useState } from 'react';
+
+/** One key of a screen: what it is called on the key line and what it does. */
+export interface ScreenKey {
+  /** As it is shown: `N`, `Ctrl Enter`, `Space`, `[`. */
+  key: string;
+  says: string;
+  act(): void;
+  /** Works inside a field too (Ctrl Enter, Esc). */
+  inFields?: boolean;
+}
+
+interface Keys {
+  shown: ScreenKey[];
+  state: string;
+  setKeys(keys: ScreenKey[]): void;
+  setState(state: string): void;
+  onScan: React.RefObject<((text: string) => void) | null>;
+}
+
+const KeysContext = createContext<Keys | null>(null);
+const SCAN_GAP_MS = 35;
+const SCAN_LEAST = 3;
+
+/** Keeps the keys of the screen that is open, the state at the right of the key line, and the scanner. */
+export function KeysProvider({ go, focusPickUp, pickUpScan, children }: { go(letter: string): void; focusPickUp(): void; pickUpScan(text: string): void; children: ReactNode }) {
+  const [shown, setKeys] = useState<ScreenKey[]>([]);
+  const [state, setState] = useState('');
+  const onScan = useRef<((text: string) => void) | null>(null);
+  const latest = useRef({ shown, go, focusPickUp, pickUpScan });
+  latest.current = { shown, go, focusPickUp, pickUpScan };
+  useEffect(() => listen(latest, onScan), []);
+  const value = useMemo(() => ({ shown, state, setKeys, setState, onScan }), [shown, state]);
+  return <KeysContext value={value}>{children}</KeysContext>;
+}
+
+type Latest = React.RefObject<{ shown: ScreenKey[]; go(letter: string): void; focusPickUp(): void; pickUpScan(text: string): void }>;
+
+function listen(latest: Latest, onScan: Keys['onScan']): () => void {
+  let goesAt = 0;
+  const burst = { text: '', at: 0 };
+  const onKey = (event: KeyboardEvent) => {
+    if (event.isComposing || event.defaultPrevented) return;
+    if (tookScan(event, burst, onScan, latest)) return;
+    const isField = event.target instanceof HTMLElement && event.target.matches('input, textarea, select, [contenteditable]');
+    const name = nameOf(event);
+    if (isField && name === 'Esc') (event.target as HTMLElement).blur();
+    const isPlain = !event.ctrlKey && !event.metaKey && !event.altKey;
+    if (!isField && isPlain && Date.now() - goesAt < 1500 && /^[A-Z]$/.test(name)) {
+      goesAt = 0;
+      event.preventDefault();
+      latest.current.go(name);
+      return;
+    }
+    if (!isField && isPlain && lettersAreOn()) {
+      if (name === 'G') { goesAt = Date.now(); return; }
+      if (name === '/') { event.preventDefault(); latest.current.focusPickUp(); return; }
+    }
+    const found = latest.current.shown.find((one) => one.key.split(' or ').includes(name) && (!isField || one.inFields));
+    if (!found || (/^[A-Z]$/.test(name) && !lettersAreOn())) return;
+    if (event.target instanceof HTMLButtonElement && (name === 'Enter' || name === 'Space')) return;
+    if (event.target instanceof HTMLAnchorElement && name === 'Enter') return;
+    event.preventDefault();
+    found.act();
+  };
+  window.addEventListener('keydown', onKey);
+  return () => window.removeEventListener('keydown', onKey);
+}
+
+/** A burst of characters ending in Enter is the scanner: to the screen's scan line, or else to Pick up. */
+function tookScan(event: KeyboardEvent, burst: { text: string; at: number }, onScan: Keys['onScan'], latest: Latest): boolean {
+  const isField = event.target instanceof HTMLElement && event.target.matches('input, textarea, select');
+  if (isField || event.ctrlKey || event.metaKey || event.altKey) { burst.text = ''; return false; }
+  const now = performance.now();
+  if (now - burst.at > SCAN_GAP_MS) burst.text = '';
+  burst.at = now;
+  if (event.key.length === 1) { burst.text += event.key; return burst.text.length >= SCAN_LEAST; }
+  if (event.key !== 'Enter' || burst.text.length < SCAN_LEAST) return false;
+  const text = burst.text;
+  burst.text = '';
+  event.preventDefault();
+  (onScan.current ?? latest.current.pickUpScan)(text);
+  return true;
+}
+
+function nameOf(event: KeyboardEvent): string {
+  const names: Record<string, string> = { ' ': 'Space', Escape: 'Esc', ArrowUp: '↑', ArrowDown: '↓', Delete: 'Del', PageUp: 'PgUp', PageDown: 'PgDn' };
+  const name = names[event.key] ?? (event.key.length === 1 ? event.key.toUpperCase() : event.key);
+  return event.ctrlKey || event.metaKey ? `Ctrl ${name}` : name;
+}
+
+/** Single-letter keys can be switched off in the menu at the right of the band. */
+export const lettersAreOn = () => localStorage.getItem('foldwell letters') !== 'off';
+
+/** Sets the keys of this screen while it is open. */
+export function useKeys(keys: ScreenKey[], state = ''): void {
+  const context = useContext(KeysContext);
+  const latest = useRef(keys);
+  latest.current = keys;
+  const names = keys.map((key) => `${key.key} ${key.says}`).join('|');
+  useEffect(() => {
+    context?.setKeys(latest.current.map((key, index) => ({ ...key, act: () => latest.current[index]?.act() })));
+    return () => context?.setKeys([]);
+  }, [names, context?.setKeys]);
+  useEffect(() => { context?.setState(state); }, [state, context?.setState]);
+}
+
+/** Sends scans to this screen's own line while it is open. */
+export function useScanner(take: (text: string) => void): void {
+  const context = useContext(KeysContext);
+  const latest = useRef(take);
+  latest.current = take;
+  useEffect(() => {
+    if (!context) return;
+    context.onScan.current = (text) => latest.current(text);
+    return () => { context.onScan.current = null; };
+  }, [context?.onScan]);
+}
+
+/** The key line at the foot: keys left, saved state right. */
+export function KeyLine() {
+  const context = useContext(KeysContext);
+  return (
+    <footer className="key-line">
+      {context?.shown.map(({ key, says }) => <span key={key + says}><kbd>{key}</kbd>{says}</span>)}
+      <span><kbd>G then a letter</kbd>go to</span><span><kbd>?</kbd>all keys</span>
+      <span className="grow" /><span role="status">{context?.state}</span>
+    </footer>
+  );
+}
