@@ -79,12 +79,12 @@ function goIn({ lot, from, weight, pieces, loss, mark }: Source, into: Legs): vo
   const lost: Loss = loss ?? { weight: 0, pieces: 0, takesCost: false };
   const passes = { weight: weight - lost.weight, pieces: pieces - lost.pieces };
   const pool = into.pools.push({ of: [into.legs.length] }) - 1;
-  const share = (part: number) => allotted(pool, lost.takesCost ? part : 1);
   into.legs.push(
     { lot, place: from, ...less({ weight, pieces }), cost: CARRIED, ...mark },
-    { lot, place: { kind: 'conversion' }, ...passes, cost: share(passes.weight) },
+    { lot, place: { kind: 'conversion' }, ...passes, cost: allotted(pool, passes.weight) },
   );
-  if (loss) into.legs.push(lossLeg(lot, loss, lost.takesCost ? share(loss.weight) : NO_COST));
+  if (loss)
+    into.legs.push(lossLeg(lot, loss, loss.takesCost ? allotted(pool, loss.weight) : NO_COST));
 }
 
 function lossLeg(lot: LotRef, { weight, pieces }: Loss, cost: Leg['cost']): Leg {

@@ -7,6 +7,5 @@ import { halfAwayFromZero } from '@foldwell/quantities';
 export function shareOfCost(cost: number, weight: number, whole: number): number {
   if (weight > whole) throw new RangeError(`${weight} cannot leave where ${whole} is`);
   if (weight === 0) return 0;
-  if (weight === whole) return cost;
   return Number(halfAwayFromZero(BigInt(cost) * BigInt(weight), BigInt(whole)));
 }

@@ -17,11 +17,10 @@ export function formatPieces(count: number, isEstimated = false): string {
 
 /**
  * Pieces of an estimated parcel that go with a part of its weight: their share, half away from zero;
- * the last weight takes all of them.
+ * the last weight takes all of them, and what weighs nothing goes whole.
  */
 export function piecesFollowing(part: number, whole: { weight: number; pieces: number }): Pieces {
-  if (part === whole.weight) return pieces(whole.pieces);
-  if (whole.weight === 0) return pieces(0);
+  if (whole.weight === 0) return pieces(whole.pieces);
   const share = halfAwayFromZero(BigInt(whole.pieces) * BigInt(part), BigInt(whole.weight));
   return pieces(Number(share));
 }

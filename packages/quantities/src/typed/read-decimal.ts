@@ -34,7 +34,7 @@ export function readDecimal(text: string, rules: DecimalRules): Reading<number> 
   }
   if (sign && !isSigned) return bad(`${what} has a sign before it; write the number alone.`);
   if (shapes.length === 0) {
-    return bad(`${what} reads “${bare}”; its points, commas and spaces don't make one number.`);
+    return bad(`${what} reads “${bare}”; its points, commas and spaces don’t make one number.`);
   }
   const reading = valuesOf(shapes, bare, rules);
   return /[-−–]/.test(sign) ? mapReading(reading, (value) => -value || 0) : reading;

@@ -7,6 +7,7 @@ import { bad, mapReading, type Reading, typedText } from './reading.js';
  * currency's code is refused; throws a RangeError only where `currency` itself isn't held.
  */
 export function readMoney(text: string, currency: string, what = 'Amount'): Reading<MinorUnits> {
+  const decimals = minorDigits(currency);
   const typed = typedText(text, what);
   if (typed.kind !== 'ok') return typed;
   const [, bare = typed.value, code = currency] =
@@ -15,7 +16,7 @@ export function readMoney(text: string, currency: string, what = 'Amount'): Read
     return bad(`${what} is in ${code.toUpperCase()}; ${currency} is needed here.`);
   }
   const reading =
-    minorDigits(currency) < 3 ? readGrouped(bare, currency, what) : readPlain(bare, currency, what);
+    decimals < 3 ? readGrouped(bare, currency, what) : readPlain(bare, currency, what);
   const isLess = reading.kind === 'ok' && reading.value < 0;
   return isLess ? bad(`${what} is less than nothing.`) : mapReading(reading, minorUnits);
 }
