@@ -1,13 +1,11 @@
-import { lazy } from 'react';
+import { type ComponentType, createElement, lazy } from 'react';
 import { createBrowserRouter } from 'react-router-dom';
 
 import { SignedIn } from '../lib/session';
 import { Shell } from './shell';
 
-const page = <T extends string>(load: () => Promise<Record<T, React.ComponentType>>, name: T) => {
-  const Page = lazy(async () => ({ default: (await load())[name] }));
-  return <Page />;
-};
+const page = <T extends string>(load: () => Promise<Record<T, ComponentType>>, name: T) =>
+  createElement(lazy(async () => ({ default: (await load())[name] as ComponentType })));
 
 /** Every sheet by its address; each is loaded when it is opened. */
 export const router = createBrowserRouter([

@@ -23,17 +23,19 @@ const LETTERS: Record<string, string> = { F: '/', L: '/lots', M: '/memos', R: '/
 export function Shell() {
   const navigate = useNavigate();
   const pickUp = useRef<PickUpHandle>(null);
+  const [isHelp, setHelp] = useState(false);
   const scan = async (text: string) => {
     const { opens } = await api<PickUpAnswer>(`/pick-up?q=${encodeURIComponent(text)}`);
     if (opens) void navigate(opens);
     else pickUp.current?.type(text);
   };
   return (
-    <KeysProvider go={(letter) => LETTERS[letter] && void navigate(LETTERS[letter])} focusPickUp={() => pickUp.current?.focus()} pickUpScan={(text) => void scan(text)}>
+    <KeysProvider go={(letter) => LETTERS[letter] && void navigate(LETTERS[letter])} focusPickUp={() => pickUp.current?.focus()} pickUpScan={(text) => void scan(text)} showAll={() => setHelp(true)}>
       <div className="frame">
         <Band pickUp={pickUp} />
         <main className="desk"><Suspense fallback={<p className="p-6 soft" role="status">Unfolding.</p>}><Outlet /></Suspense></main>
         <KeyLine />
+        {isHelp && <AllKeys onLeave={() => setHelp(false)} />}
       </div>
     </KeysProvider>
   );
@@ -92,7 +94,7 @@ function Who() {
 }
 
 /** All keys, for `?`. */
-export function AllKeys({ onLeave }: { onLeave(): void }) {
+function AllKeys({ onLeave }: { onLeave(): void }) {
   return (
     <Dialog title="All keys" onLeave={onLeave}>
       <table className="inner"><tbody>

@@ -22,19 +22,27 @@ const KeysContext = createContext<Keys | null>(null);
 const SCAN_GAP_MS = 35;
 const SCAN_LEAST = 3;
 
+/** What the band does for keys: go to a flap, pick up, show all keys. */
+export interface BandActs {
+  go(letter: string): void;
+  focusPickUp(): void;
+  pickUpScan(text: string): void;
+  showAll(): void;
+}
+
 /** Keeps the keys of the screen that is open, the state at the right of the key line, and the scanner. */
-export function KeysProvider({ go, focusPickUp, pickUpScan, children }: { go(letter: string): void; focusPickUp(): void; pickUpScan(text: string): void; children: ReactNode }) {
+export function KeysProvider({ children, ...acts }: BandActs & { children: ReactNode }) {
   const [shown, setKeys] = useState<ScreenKey[]>([]);
   const [state, setState] = useState('');
   const onScan = useRef<((text: string) => void) | null>(null);
-  const latest = useRef({ shown, go, focusPickUp, pickUpScan });
-  latest.current = { shown, go, focusPickUp, pickUpScan };
+  const latest = useRef({ shown, ...acts });
+  latest.current = { shown, ...acts };
   useEffect(() => listen(latest, onScan), []);
   const value = useMemo(() => ({ shown, state, setKeys, setState, onScan }), [shown, state]);
   return <KeysContext value={value}>{children}</KeysContext>;
 }
 
-type Latest = React.RefObject<{ shown: ScreenKey[]; go(letter: string): void; focusPickUp(): void; pickUpScan(text: string): void }>;
+type Latest = React.RefObject<BandActs & { shown: ScreenKey[] }>;
 
 function listen(latest: Latest, onScan: Keys['onScan']): () => void {
   let goesAt = 0;
@@ -55,6 +63,7 @@ function listen(latest: Latest, onScan: Keys['onScan']): () => void {
     if (!isField && isPlain && lettersAreOn()) {
       if (name === 'G') { goesAt = Date.now(); return; }
       if (name === '/') { event.preventDefault(); latest.current.focusPickUp(); return; }
+      if (name === '?') { event.preventDefault(); latest.current.showAll(); return; }
     }
     const found = latest.current.shown.find((one) => one.key.split(' or ').includes(name) && (!isField || one.inFields));
     if (!found || (/^[A-Z]$/.test(name) && !lettersAreOn())) return;

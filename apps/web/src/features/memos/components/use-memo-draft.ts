@@ -1,0 +1,100 @@
+import { useCallback, useEffect, useRef, useState } from 'react';
+
+import { api, Problem } from '../../../lib/api-client';
+import { EMPTY_DRAFT, type MemoDraft } from './memo-draft';
+
+const KEEPS_AFTER_MS = 700;
+const LOCAL = 'foldwell memo draft';
+
+interface Stored {
+  id: string | null;
+  version: number;
+  draft: MemoDraft;
+}
+
+/**
+ * A draft that is never lost: in this browser at once, in the house a moment later. Without a
+ * connection it stays here and says so.
+ */
+export function useMemoDraft(openId: string | undefined): { draft: MemoDraft; change(part: Partial<MemoDraft>): void; state: string; id: string | null; keepNow(): Promise<string | null>; forget(): void; isReady: boolean } {
+  const [stored, setStored] = useState<Stored>(() => (openId ? { id: openId, version: 1, draft: EMPTY_DRAFT } : readLocal()));
+  const [state, setState] = useState('');
+  const [isReady, setReady] = useState(!openId);
+  const latest = useRef(stored);
+  latest.current = stored;
+  const timer = useRef<number>(0);
+
+  useEffect(() => {
+    if (!openId) return;
+    void api<{ id: string; version: number; body: MemoDraft }>(`/drafts/${openId}`)
+      .then(({ id, version, body }) => setStored({ id, version, draft: { ...EMPTY_DRAFT, ...body } }))
+      .catch((problem: unknown) => setState(problem instanceof Error ? problem.message : ''))
+      .finally(() => setReady(true));
+  }, [openId]);
+
+  const keepNow = useCallback(async (): Promise<string | null> => {
+    window.clearTimeout(timer.current);
+    const { id, version, draft } = latest.current;
+    if (draft.lines.length === 0 && draft.party === '') return id;
+    const clock = new Date().toTimeString().slice(0, 8);
+    try {
+      const kept = await send(id, version, draft);
+      setStored((was) => ({ ...was, id: kept.id, version: kept.version }));
+      latest.current = { ...latest.current, ...kept };
+      writeLocal({ ...latest.current, ...kept });
+      setState(`Draft kept ${clock}`);
+      return kept.id;
+    } catch (problem) {
+      setState(problem instanceof Problem ? `Draft kept here only: ${problem.message}` : `Not saved. The connection dropped at ${clock}. Your ${draft.lines.length} lines are kept here.`);
+      return latest.current.id;
+    }
+  }, []);
+
+  const change = useCallback((part: Partial<MemoDraft>) => {
+    setStored((was) => {
+      const next = { ...was, draft: { ...was.draft, ...part } };
+      writeLocal(next);
+      return next;
+    });
+    window.clearTimeout(timer.current);
+    timer.current = window.setTimeout(() => void keepNow(), KEEPS_AFTER_MS);
+  }, [keepNow]);
+
+  const forget = useCallback(() => {
+    window.clearTimeout(timer.current);
+    localStorage.removeItem(LOCAL);
+    setStored({ id: null, version: 1, draft: EMPTY_DRAFT });
+  }, []);
+  return { draft: stored.draft, change, state, id: stored.id, keepNow, forget, isReady };
+}
+
+async function send(id: string | null, version: number, draft: MemoDraft): Promise<{ id: string; version: number }> {
+  const body = { body: draft, party: draft.party };
+  if (!id) return api('/drafts', { method: 'POST', body });
+  try {
+    const kept = await api<{ version: number }>(`/drafts/${id}`, { method: 'PUT', version, body });
+    return { id, version: kept.version };
+  } catch (problem) {
+    // Booked or thrown away elsewhere: what is typed here begins a new draft.
+    if (problem instanceof Problem && problem.body.status === 404) return api('/drafts', { method: 'POST', body });
+    if (problem instanceof Problem && problem.body.status === 412) {
+      const { version: current } = problem.body.current as { version: number };
+      return { id, version: (await api<{ version: number }>(`/drafts/${id}`, { method: 'PUT', version: current, body })).version };
+    }
+    throw problem;
+  }
+}
+
+function readLocal(): Stored {
+  try {
+    const kept = JSON.parse(localStorage.getItem(LOCAL) ?? 'null') as Stored | null;
+    if (kept) return { ...kept, draft: { ...EMPTY_DRAFT, ...kept.draft } };
+  } catch {
+    // What can't be read is not a draft.
+  }
+  return { id: null, version: 1, draft: EMPTY_DRAFT };
+}
+
+function writeLocal(stored: Stored): void {
+  localStorage.setItem(LOCAL, JSON.stringify(stored));
+}
