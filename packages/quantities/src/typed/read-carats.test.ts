@@ -56,6 +56,7 @@ test.each([
   ['0', 'Weight is zero; it needs carats.'],
   ['0.00 ct', 'Weight is zero; it needs carats.'],
   ['-5', 'Weight is less than nothing; it needs carats.'],
+  ['-1,234', 'Weight is less than nothing; it needs carats.'],
   ['−0.08', 'Weight is less than nothing; it needs carats.'],
   ['1.234', 'Weight has three decimals; this house’s balance reads to 0.01 ct.'],
   ['1.2345', 'Weight “1.2345” has more than 3 decimals.'],

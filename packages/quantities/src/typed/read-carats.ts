@@ -1,6 +1,6 @@
 import { type MilliCarats, milliCarats, type Step } from '../weights/milli-carats.js';
 import { type DecimalRules, readDecimal } from './read-decimal.js';
-import { bad, type Reading, typedText } from './reading.js';
+import { bad, mapReading, type Reading, typedText, valuesOf } from './reading.js';
 
 /** A hundred million carats: more than any house holds, and small enough to multiply by prices. */
 const MOST = 100_000_000_000;
@@ -11,12 +11,13 @@ export function readCarats(text: string, step: Step, what = 'Weight'): Reading<M
   if (typed.kind !== 'ok') return typed;
   const reading = readDecimal(...withoutUnit(typed.value, what));
   if (reading.kind === 'bad') return reading;
-  if (reading.kind === 'ambiguous') {
-    // Also where only one of them fits the step: `1,234` at step 0.01 is hardly a thousand carats.
-    return { ...reading, readings: reading.readings.map(milliCarats) };
+  // Also where only one of two fits the step: `1,234` at step 0.01 is hardly a thousand carats.
+  if (reading.kind === 'ambiguous' && reading.readings.every((value) => value > 0)) {
+    return mapReading(reading, milliCarats);
   }
-  const why = whyNot(reading.value, step, what);
-  return why === null ? { kind: 'ok', value: milliCarats(reading.value) } : bad(why);
+  const [value = 0] = valuesOf(reading);
+  const why = whyNot(value, step, what);
+  return why === null ? { kind: 'ok', value: milliCarats(value) } : bad(why);
 }
 
 /** The number alone, and how to read it: points have one decimal where carats have three. */

@@ -9,6 +9,7 @@ import { readDecimal } from './read-decimal.js';
 import { readMoney } from './read-money.js';
 import { readPercent } from './read-percent.js';
 import { readPieces } from './read-pieces.js';
+import { valuesOf } from './reading.js';
 
 const weights = fc.integer({ min: 1, max: 100_000_000_000 });
 const amounts = fc.integer({ min: 0, max: 900_000_000_000_000 });
@@ -51,8 +52,10 @@ test('whatever is typed, it is read, asked about or refused in a sentence', () =
   fc.assert(
     fc.property(fc.oneof(keys, fc.string({ unit: 'binary' })), (text) => {
       for (const reading of [readCarats(text, 10), readMoney(text, 'USD'), readPieces(text)]) {
-        if (reading.kind === 'ok') expect(Number.isSafeInteger(reading.value)).toBe(true);
-        else expect(reading.why).toMatch(/^[A-Z][^\p{C}]*\.$/u);
+        for (const value of valuesOf<number>(reading)) {
+          expect(Number.isSafeInteger(value) && value >= 0).toBe(true);
+        }
+        if (reading.kind !== 'ok') expect(reading.why).toMatch(/^[A-Z][^\p{C}]*\.$/u);
         if (reading.kind === 'ambiguous') expect(reading.readings.length).toBeGreaterThan(1);
       }
     }),

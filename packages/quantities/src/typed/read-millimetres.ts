@@ -1,5 +1,5 @@
 import { readDecimal } from './read-decimal.js';
-import { bad, type Reading, typedText } from './reading.js';
+import { bad, type Reading, typedText, valuesOf } from './reading.js';
 
 /** Reads millimetres (`6.42`, `6,42 mm`) into thousandths of a millimetre. */
 export function readMillimetres(text: string, what = 'Measurement'): Reading<number> {
@@ -11,8 +11,7 @@ export function readMillimetres(text: string, what = 'Measurement'): Reading<num
     unit: 'mm',
   });
   if (reading.kind === 'bad') return reading;
-  const values = reading.kind === 'ok' ? [reading.value] : reading.readings;
-  const fitting = values.filter((value) => value >= 100 && value <= 200_000);
+  const fitting = valuesOf(reading).filter((value) => value >= 100 && value <= 200_000);
   const [value] = fitting;
   if (value === undefined) return bad(`${what} must lie between 0.1 and 200 mm.`);
   return fitting.length === 1 ? { kind: 'ok', value } : reading;

@@ -1,6 +1,6 @@
 import { type MinorUnits, minorDigits, minorUnits } from '../money/minor-units.js';
 import { readDecimal } from './read-decimal.js';
-import { bad, mapReading, type Reading, typedText } from './reading.js';
+import { bad, mapReading, type Reading, typedText, valuesOf } from './reading.js';
 
 /**
  * Reads money of one currency (`5,280`, `5280.00 USD`), zero allowed, into minor units. Another
@@ -17,8 +17,9 @@ export function readMoney(text: string, currency: string, what = 'Amount'): Read
   }
   const reading =
     decimals < 3 ? readGrouped(bare, currency, what) : readPlain(bare, currency, what);
-  const isLess = reading.kind === 'ok' && reading.value < 0;
-  return isLess ? bad(`${what} is less than nothing.`) : mapReading(reading, minorUnits);
+  return valuesOf(reading).some((value) => value < 0)
+    ? bad(`${what} is less than nothing.`)
+    : mapReading(reading, minorUnits);
 }
 
 function readPlain(

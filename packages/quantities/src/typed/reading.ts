@@ -40,3 +40,9 @@ export function mapReading<T, U>(reading: Reading<T>, mark: (value: T) => U): Re
   if (reading.kind === 'ok') return { kind: 'ok', value: mark(reading.value) };
   return { ...reading, readings: reading.readings.map(mark) };
 }
+
+/** All that a text may be read as. */
+export function valuesOf<T>(reading: Reading<T>): T[] {
+  if (reading.kind === 'bad') return [];
+  return reading.kind === 'ok' ? [reading.value] : reading.readings;
+}
