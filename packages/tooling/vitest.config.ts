@@ -4,7 +4,7 @@ import { defineConfig } from 'vitest/config';
 const root = fileURLToPath(new URL('../../', import.meta.url));
 const env = { TZ: 'UTC' };
 
-/** `beside` needs no database; `house` runs against a real one; `outside` asks other programs. */
+/** `beside` needs no database; `house` runs against a real one; `outside` asks other programs; `bench` measures. */
 export default defineConfig({
   root,
   test: {
@@ -21,7 +21,7 @@ export default defineConfig({
           name: 'house',
           env,
           include: ['tests/**/*.test.ts'],
-          exclude: ['tests/outside-programs/**', '**/node_modules/**'],
+          exclude: ['tests/{outside-programs,bench}/**', '**/node_modules/**'],
           globalSetup: ['tests/support/global-setup.ts'],
           testTimeout: process.env.FOLDWELL_FULL === '1' ? 3_600_000 : 120_000,
           hookTimeout: 120_000,
@@ -39,6 +39,17 @@ export default defineConfig({
           ],
           testTimeout: 300_000,
           hookTimeout: 300_000,
+        },
+      },
+      {
+        root,
+        test: {
+          name: 'bench',
+          env,
+          include: ['tests/bench/**/*.test.ts'],
+          globalSetup: ['tests/support/global-setup.ts'],
+          testTimeout: 600_000,
+          hookTimeout: 120_000,
         },
       },
     ],

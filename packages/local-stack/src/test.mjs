@@ -16,17 +16,19 @@ const VITEST = [
   '--config',
   'packages/tooling/vitest.config.ts',
 ];
-const PROJECTS = { '--outside': ['outside'], none: ['beside', 'house'] };
+/** @type {Record<string, string[]>} */
+const PROJECTS = { '--outside': ['outside'], '--bench': ['bench'], '--long': ['beside', 'house'] };
 
-/** `npm test`, `test:long` (`--long`) and `test:outside` (`--outside`); other words choose files. */
+/** `npm test`, `test:long` (`--long`) and `test:outside` (`--outside`), `bench` (`--bench`); other words choose files. */
 runCommand(async () => {
   await installPackages();
   await findOrInstallPostgres(say);
   await findOrInstallChromium(say);
   await build();
   const words = process.argv.slice(2);
-  const chosen = words.includes('--outside') ? PROJECTS['--outside'] : PROJECTS.none;
-  const files = words.filter((word) => !['--outside', '--long'].includes(word));
+  const way = words.find((word) => word in PROJECTS) ?? '--long';
+  const chosen = PROJECTS[way] ?? [];
+  const files = words.filter((word) => !(word in PROJECTS));
   const report = join(STATE, `tests-${process.pid}.json`);
   mkdirSync(STATE, { recursive: true, mode: 0o755 });
   const args = [
