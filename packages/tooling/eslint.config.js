@@ -1,3 +1,5 @@
+import { fileURLToPath } from 'node:url';
+
 import js from '@eslint/js';
 import reactHooks from 'eslint-plugin-react-hooks';
 import tseslint from 'typescript-eslint';
@@ -20,6 +22,7 @@ export default tseslint.config(
   {
     languageOptions: {
       parserOptions: {
+        tsconfigRootDir: fileURLToPath(new URL('../../', import.meta.url)),
         projectService: {
           allowDefaultProject: [
             'apps/*/*.mjs',

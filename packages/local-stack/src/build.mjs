@@ -36,7 +36,6 @@ async function buildInto(dist, folders, command) {
   const stamp = hashOf(['package-lock.json', 'tsconfig.base.json', ...folders, 'packages']);
   const stampFile = join(dist, '.inputs');
   if (existsSync(stampFile) && readFileSync(stampFile, 'utf8') === stamp) return;
-  if (dist === WEB_DIST && !existsSync(join(ROOT, 'apps/web/index.html'))) return;
   const next = `${dist}.${process.pid}`;
   try {
     await runProgram(process.execPath, command(next), {

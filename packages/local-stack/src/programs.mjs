@@ -1,4 +1,3 @@
-import { existsSync } from 'node:fs';
 import { join } from 'node:path';
 
 import { API_DIST, WEB_DIST } from './build.mjs';
@@ -31,7 +30,7 @@ export function programEnv({ port, secrets }) {
       ...base,
       DATABASE_URL: urls.api,
       SESSION_SECRET: secrets.sessionSecret,
-      ...(existsSync(WEB_DIST) && { WEB_DIR: WEB_DIST }),
+      WEB_DIR: WEB_DIST,
     },
     worker: { ...base, WORKER_DATABASE_URL: urls.worker },
     migrate: { ...base, OWNER_DATABASE_URL: urls.owner },
