@@ -1,4 +1,3 @@
-import { existsSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
 
@@ -7,9 +6,9 @@ const here = fileURLToPath(new URL('./', import.meta.url));
 const [folder = `${here}dist`] = process.argv.slice(2);
 
 await build({
-  entryPoints: ['main', 'worker', 'migrate', 'verify', 'seed']
-    .map((name) => `${here}src/${name}.ts`)
-    .filter(existsSync),
+  entryPoints: ['main', 'worker', 'migrate', 'verify', 'seed'].map(
+    (name) => `${here}src/${name}.ts`,
+  ),
   outdir: folder,
   outExtension: { '.js': '.mjs' },
   bundle: true,
@@ -23,8 +22,8 @@ await build({
     {
       // Own packages are source and go in; `packages: 'external'` would leave them outside as well.
       name: 'own-source',
-      setup({ onResolve }) {
-        onResolve({ filter: /^[^./]/ }, ({ kind, path }) =>
+      setup(bundle) {
+        bundle.onResolve({ filter: /^[^./]/ }, ({ kind, path }) =>
           kind === 'entry-point' || path.startsWith('@foldwell/')
             ? undefined
             : { path, external: true },

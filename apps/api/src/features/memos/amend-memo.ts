@@ -105,7 +105,7 @@ export async function keepAct(ctx: Context, key: Key, number: string, { lines, b
   const kept = lines.map((asked) => ({ asked, found: lineOf(memo, asked.lot) }));
   const written = await postAct(ctx, key, {
     kind: 'kept', memoId: memo.id, businessDate,
-    ...together(...kept.map(({ asked, found }) => keep(found.line, asked))),
+    ...together(...kept.map(({ asked: { weight, pieces }, found }) => keep(found.line, { weight, pieces }))),
     keeps: kept.map(({ asked, found }) => ({ lineId: found.line.lineId, weight: asked.weight, pieces: asked.pieces,
       price: asked.price ?? null, agreedSum: asked.sum ?? null, amount: keptAmount(found, asked) })) });
   return { movementId: String(written.movementId) };
@@ -124,7 +124,7 @@ export async function unKeepLines(req: Request, ctx: Context): Promise<Answer> {
   const memo = await findMemo(ctx, String(req.params.number));
   const back = lines.map((asked) => ({ asked, found: lineOf(memo, asked.lot) }));
   const written = await postAct(ctx, keyOf(req, ctx), {
-    kind: 'un-kept', memoId: memo.id, ...together(...back.map(({ asked, found }) => unKeep(found.line, asked))),
+    kind: 'un-kept', memoId: memo.id, ...together(...back.map(({ asked: { weight, pieces }, found }) => unKeep(found.line, { weight, pieces }))),
     keeps: back.map(({ asked, found }) => ({ lineId: found.line.lineId, weight: -asked.weight, pieces: -asked.pieces, amount: -keptAmount(found, asked) })) });
   return { status: 201, body: { movementId: String(written.movementId) } };
 }
