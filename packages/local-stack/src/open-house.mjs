@@ -1,5 +1,3 @@
-import { existsSync } from 'node:fs';
-
 import { build } from './build.mjs';
 import { openDatabase } from './open-database.mjs';
 import { programArgs, programEnv } from './programs.mjs';
@@ -47,7 +45,7 @@ async function fillHouse(isEmpty, env) {
       );
     return kept;
   }
-  if (isEmpty || !existsSync(programArgs('seed')[1] ?? '')) {
+  if (isEmpty) {
     const house = {
       kind: /** @type {const} */ ('empty'),
       isReady: true,
