@@ -11,6 +11,9 @@ const WIDTH = 1392;
 const DAY = WIDTH / 30.6;
 const at = (days: number) => WIDTH / 2 + days * DAY;
 
+/** A number is written only where the next bar leaves room for it; the table has them all. */
+const isRoom = (day: number, next: number | undefined) => day < 15 && (next === undefined || next - day > 1);
+
 /** Memos by due date around today: height is value out, red is late; further ones stand at the ends. */
 export function DueLine({ memos, today }: { memos: Due[]; today: string }) {
   const navigate = useNavigate();
@@ -36,13 +39,13 @@ export function DueLine({ memos, today }: { memos: Due[]; today: string }) {
           </g>
         );
       })}
-      {[...byDay].map(([day, due]) => due.slice(0, 3).map((memo, index) => {
+      {[...byDay].sort(([a], [b]) => a - b).map(([day, due], place, all) => due.slice(0, 3).map((memo, index) => {
         const height = 8 + (38 * memo.value) / most;
         const x = at(day) - 5 + index * 13 + (day === 0 ? 8 : 0);
         return (
           <g key={memo.number} onClick={() => void navigate(`/memos/${memo.number}`)} style={{ cursor: 'pointer' }}>
             <rect x={x} y={66 - height} width="10" height={height} className={day < 0 ? 'late' : 'memo'} />
-            {index === due.slice(0, 3).length - 1 && <text x={x + 14} y={75 - height} className={day < 0 ? 'late' : ''}>{due.length > 1 ? `${due[0]?.number} +${due.length - 1}` : memo.number}</text>}
+            {index === due.slice(0, 3).length - 1 && isRoom(day, all[place + 1]?.[0]) && <text x={x + 14} y={75 - height} className={day < 0 ? 'late' : ''}>{due.length > 1 ? `${due[0]?.number} +${due.length - 1}` : memo.number}</text>}
           </g>
         );
       }))}

@@ -34,7 +34,7 @@ export function MemoTable({ memos, today, rows }: { memos: MemoRow[]; today: str
               <td className="lot"><a href={`/memos/${memo.number}`} onClick={(event) => { event.preventDefault(); void navigate(`/memos/${memo.number}`); }}>M {memo.number}</a></td>
               <td>{memo.party}</td><td className="n wide">{memo.lots}</td><td><BalanceBar parts={flowParts(memo.flows)} /></td>
               <td className="n">{formatCarats(memo.flows.out)}</td><td className="n quiet wide">{formatCarats(memo.flows.sent)}</td>
-              <td className="n wide">{formatAmount(memo.value, memo.currency, true)} <span className="unit">{memo.currency}</span></td>
+              <td className="n wide">{formatAmount(memo.value, memo.currency)} <span className="unit">{memo.currency}</span></td>
               <td className="wide">{shortDate(memo.due, today)}</td>
               <td>{memo.differences > 0 ? <span className="red">to answer</span> : <span className={when.startsWith('late') ? 'red' : when === 'today' ? 'font-semibold' : 'quiet'}>{when}</span>}</td>
             </tr>
@@ -44,7 +44,7 @@ export function MemoTable({ memos, today, rows }: { memos: MemoRow[]; today: str
       <tfoot>
         <tr>
           <td>{memos.length} memos</td><td /><td className="n wide">{sum((memo) => memo.lots)}</td><td /><td className="n">{formatCarats(sum((memo) => memo.flows.out))}</td>
-          <td className="n wide">{formatCarats(sum((memo) => memo.flows.sent))}</td><td className="n wide">{isOneCurrency && memos[0] ? formatAmount(sum((memo) => memo.value), memos[0].currency, true) : ''}</td><td className="wide" /><td />
+          <td className="n wide">{formatCarats(sum((memo) => memo.flows.sent))}</td><td className="n wide">{isOneCurrency && memos[0] ? formatAmount(sum((memo) => memo.value), memos[0].currency) : ''}</td><td className="wide" /><td />
         </tr>
       </tfoot>
     </table>

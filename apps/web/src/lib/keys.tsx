@@ -131,7 +131,7 @@ export function KeyLine() {
   const context = useContext(KeysContext);
   return (
     <footer className="key-line">
-      {context?.shown.map(({ key, says }) => <span key={key + says}><kbd>{key}</kbd>{says}</span>)}
+      {context?.shown.filter(({ says }) => says !== '').map(({ key, says }) => <span key={key + says}><kbd>{key}</kbd>{says}</span>)}
       <span><kbd>G then a letter</kbd>go to</span><span><kbd>?</kbd>all keys</span>
       <span className="grow" /><span role="status">{context?.state}</span>
     </footer>

@@ -71,7 +71,7 @@ async function placesOf({ db, person }: Context, lot: LotRecord, ask: number | n
 function papersOf({ db }: Context, lotId: string): Promise<{ paper: string; number: string; date: string }[]> {
   return db.query(
     `SELECT * FROM (
-       SELECT initcap(d.kind) AS paper, d.number, d.at::date::text AS date, d.at FROM document d
+       SELECT initcap(d.kind) AS paper, d.number, coalesce(d.snapshot::jsonb ->> 'date', d.at::date::text) AS date, d.at FROM document d
          WHERE d.memo_id IN (SELECT memo_id FROM memo_line WHERE lot_id = $1)
        UNION ALL SELECT 'Weighing slip', 'W ' || w.number, w.business_date::text, w.at FROM weighing w WHERE w.lot_id = $1) x
      ORDER BY at DESC LIMIT 40`, [lotId]);

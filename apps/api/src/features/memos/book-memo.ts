@@ -57,9 +57,13 @@ async function plan({ db }: Context, line: MemoLineRequest): Promise<PlannedLine
   if ((line.price === undefined) === (line.sum === undefined)) {
     throw new ValidationFailed([{ field: 'lines', message: `${line.lot} needs a price per carat or a sum.` }]);
   }
-  const placeId = line.place ?? (await holdingsOf(db, record.id)).find((holding) => holding.free >= line.weight)?.placeId
-    ?? (await holdingsOf(db, record.id))[0]?.placeId;
-  if (!placeId) throw new RuleBroken('lot_not_free', `${line.lot} not added. It is not in the house any more.`);
+  const holdings = await holdingsOf(db, record.id);
+  const free = holdings.filter((holding) => holding.free > 0 && (!line.place || holding.placeId === line.place));
+  const placeId = (free.find((holding) => holding.free >= line.weight) ?? free[0])?.placeId;
+  if (!placeId) {
+    const { sentence, ...way } = whoHasIt(record.number, holdings, await houseToday(db));
+    throw new RuleBroken('lot_not_free', sentence, { lot: record.number, ...way });
+  }
   const isStated = record.kind === 'stone' && record.stated_weight !== null;
   return { ...line, record, placeId: Number(placeId), pricedWeight: isStated ? Number(record.stated_weight) : line.weight };
 }

@@ -51,7 +51,7 @@ export async function readMemo(req: Request, { db }: Context): Promise<Answer> {
     differenceList: await differenceRows(db, 'n.memo_id = $1', [id]),
     words: await db.query(`SELECT x.at, x.words, coalesce(w.name, 'Foldwell') AS by, x.is_theirs AS "isTheirs" FROM memo_word x LEFT JOIN person w ON w.id = x.person_id WHERE x.memo_id = $1 ORDER BY x.id DESC`, [id]),
     papers: await db.query(
-      `SELECT * FROM (SELECT initcap(kind) AS kind, number, at::date::text AS date, at FROM document WHERE memo_id = $1
+      `SELECT * FROM (SELECT initcap(kind) AS kind, number, coalesce(snapshot::jsonb ->> 'date', at::date::text) AS date, at FROM document WHERE memo_id = $1
          UNION ALL SELECT 'Weighing slip', 'W ' || g.number, g.business_date::text, g.at FROM weighing g JOIN memo_line n ON n.id = g.memo_line_id WHERE n.memo_id = $1) p ORDER BY at DESC`, [id]),
     otherMemos: (await memoRows(db, 'm.party_id = $1 AND m.id <> $2 AND NOT m.is_settled', [partyId, id])).map((memo) => ({ number: memo.number, out: memo.flows.out, due: memo.due })),
     voidRefusal: row?.state === 'void' ? 'it is void already' : isTouched ? 'part is already settled' : null,

@@ -12,7 +12,7 @@ import { type Key, keyOf, postAct } from '../ledger/post-act.js';
 interface Difference {
   id: string; lot_id: string; memo_line_id: string | null; memo_id: string | null; kind: string; expected_weight: string; found_weight: string;
   held_weight: string; held_pieces: string; came_lot_id: string | null; price: string | null; agreed_sum: string | null; priced_weight: string | null; sent_weight: string | null;
-  party_id: string | null; part_place: string | null; origin: string; treatment: string;
+  party_id: string | null; part_place: string | null; part_line: string | null; origin: string; treatment: string;
 }
 
 /** Closes a difference by somebody else than who weighed; each answer posts through the ledger. */
@@ -25,10 +25,14 @@ export async function answer(req: Request, ctx: Context): Promise<Answer> {
 export async function answerDifference(ctx: Context, key: Key, id: string, { answer: word, reason, businessDate }: AnswerRequest): Promise<{ movementId: string | null }> {
   const [difference] = await ctx.db.query<Difference[]>(
     `SELECT d.*, n.memo_id, n.price, n.agreed_sum, n.priced_weight, n.sent_weight, m.party_id, l.origin, l.treatment,
-       -- Cost that comes back goes to a place of the lot that holds weight: the desk first, then the safe.
-       (SELECT b.place_id FROM balance b JOIN place p ON p.id = b.place_id WHERE b.lot_id = d.lot_id AND b.inside AND b.weight > 0 AND p.kind <> 'missing'
-          ORDER BY array_position(ARRAY['return desk', 'drawer', 'show', 'quarantine', 'person', 'memo'], p.kind) NULLS LAST LIMIT 1) AS part_place
-     FROM difference d JOIN lot l ON l.id = d.lot_id LEFT JOIN memo_line n ON n.id = d.memo_line_id LEFT JOIN memo m ON m.id = n.memo_id WHERE d.id::text = $1`, [id]);
+       part.place_id AS part_place, part.line_id AS part_line
+     FROM difference d JOIN lot l ON l.id = d.lot_id LEFT JOIN memo_line n ON n.id = d.memo_line_id LEFT JOIN memo m ON m.id = n.memo_id
+     -- Cost that comes back goes to a place of the lot that holds weight: the desk first, then the safe.
+     LEFT JOIN LATERAL (SELECT b.place_id, x.id AS line_id FROM balance b JOIN place p ON p.id = b.place_id
+       LEFT JOIN memo_line x ON p.kind = 'memo' AND x.memo_id = p.memo_id AND x.lot_id = b.lot_id
+       WHERE b.lot_id = d.lot_id AND b.inside AND b.weight > 0 AND p.kind <> 'missing'
+       ORDER BY array_position(ARRAY['return desk', 'drawer', 'show', 'quarantine', 'person', 'memo'], p.kind) NULLS LAST LIMIT 1) part ON true
+     WHERE d.id::text = $1`, [id]);
   if (!difference) throw new NotFound('There is no such difference.');
   if (NEEDS_REASON.includes(word) && !reason?.trim()) throw new RuleBroken('movement_reason_where_due', `“${word}” needs a reason.`);
   const act = actOf(difference, word);
@@ -46,7 +50,7 @@ function actOf(difference: Difference, word: AnswerRequest['answer']): Act {
   const kind = 'difference answered';
   const isShort = SHORT.includes(difference.kind);
   if (isShort && word === 'customer keeps it' && held.line) return { kind, ...keepsItToo(held, held.line), keeps: [keepOf(difference, held)] };
-  if (isShort && word === 'accepted') return { kind, ...acceptDifference(held, difference.part_place ? { id: Number(difference.part_place) } : null) };
+  if (isShort && word === 'accepted') return { kind, ...acceptedLegs(difference, held) };
   if (isShort && word === 'found again') return { kind, ...foundAgain(held, { kind: 'return desk' }) };
   if (isShort && word === 'record corrected') return { kind, ...recordCorrected(held, { kind: 'return desk' }) };
   if (isShort && word === 'written off') return { kind, ...writeOffMissing(held) };
@@ -58,6 +62,12 @@ function actOf(difference: Difference, word: AnswerRequest['answer']): Act {
   if (difference.kind === 'other weight' && word === 'found again') return { kind: null };
   if (difference.kind === 'suspected switch' && ['other stone', 'found again'].includes(word)) return { kind: null };
   throw new RuleBroken('answer_fits', `“${word}” is not an answer to ${difference.kind === 'excess' ? 'an excess' : `“${difference.kind}”`}.`);
+}
+
+/** The cost goes back to the rest of the lot, also where that lies on a memo. */
+function acceptedLegs({ part_place: place, part_line: line }: Difference, held: Held): Legs {
+  const mark = line === null ? {} : { line: { id: Number(line) }, flow: 'out' as const };
+  return acceptDifference(held, place === null ? null : { id: Number(place) }, mark);
 }
 
 function heldBy(difference: Difference): Held {

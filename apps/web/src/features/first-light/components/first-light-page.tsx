@@ -101,7 +101,7 @@ function Late({ light }: { light: FirstLight }) {
           <tbody>{light.late.map((one) => (
             <tr key={one.memo}>
               <td><Link to={`/customers/${one.partyNumber}`}>{one.party}</Link></td><td><Link to={`/memos/${one.memo}`}>M {one.memo}</Link></td>
-              <td className="n red">{one.days} d</td><td className="n">{formatAmount(one.value, one.currency, true)} <span className="unit">{one.currency}</span></td><td className="soft max-w-[200px] truncate">{one.lastWord}</td>
+              <td className="n red">{one.days} d</td><td className="n">{formatAmount(one.value, one.currency)} <span className="unit">{one.currency}</span></td><td className="soft max-w-[200px] truncate">{one.lastWord}</td>
             </tr>))}
           </tbody>
         </table>

@@ -92,7 +92,7 @@ function Label({ lot }: { lot: LotDetail }) {
   return (
     <div className="px-6 pt-2">
       <div className="flex justify-between bg-paper-2 px-4 py-2 small soft" style={{ clipPath: 'polygon(0 0, 100% 0, calc(100% - 22px) 100%, 22px 100%)' }}>
-        <span className="pl-4">{lot.source ? `Taken in ${lot.takenInOn ? shortDate(lot.takenInOn) : ''} from ${lot.source}` : `Opening stock ${lot.takenInOn ?? ''}`}</span><span className="pr-4">{lot.sourcePaper}</span>
+        <span className="pl-4">{lot.source ? `Taken in ${lot.takenInOn ? shortDate(lot.takenInOn) : ''} from ${lot.source}` : `Opening stock ${lot.takenInOn ? longDate(lot.takenInOn) : ''}`}</span><span className="pr-4">{lot.sourcePaper}</span>
       </div>
       <div className="paper mx-[22px] p-4 border-b-0">
         <div className="flex gap-4 items-start">

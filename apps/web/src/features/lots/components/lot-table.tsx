@@ -85,7 +85,7 @@ function Row({ row, index, table, picked, onPick, unfolded }: Props & { row: Lot
         <td>{row.colour}</td><td>{row.clarity}</td>
         <td className="wide fold-first">{row.kind === 'parcel' ? <span className="quiet">average {averageCarats(row.weight, row.pieces)} ct</span> : row.make}</td>
         <td className="wide fold-first">{row.fluorescence}</td><td className="wide">{row.report || (row.kind === 'parcel' ? '' : <span className="quiet">no report</span>)}</td>
-        <td className="n">{row.ask === null ? '–' : formatAmount(row.ask, currency, true)}</td><td className="n wide">{row.total === null ? '–' : formatAmount(row.total, currency, true)}</td>
+        <td className="n">{row.ask === null ? '–' : formatAmount(row.ask, currency, true)}</td><td className="n wide">{row.total === null ? '–' : formatAmount(row.total, currency)}</td>
         <td><BalanceBar parts={row.bar} whole={row.weight} /></td>
         <td className={row.tone === 'plain' ? 'soft' : 'red'}>{row.owner && <span className="quiet">{row.owner}: </span>}{row.place}</td>
       </tr>

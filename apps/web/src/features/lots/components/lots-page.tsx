@@ -80,7 +80,7 @@ function Foot({ sum }: { sum: LotSum }) {
     <div className="foot small">
       <b>{sum.isCapped ? '10k+' : sum.lots} lots</b><span><b>{sum.pieces.toLocaleString('en-US')}</b> <span className="unit">pcs</span></span>
       <span><b>{formatCarats(sum.weight)}</b> <span className="unit">ct</span></span>
-      <span><b>{formatAmount(sum.value, currency, true)}</b> <span className="unit">{currency} at ask</span></span>
+      <span><b>{formatAmount(sum.value, currency)}</b> <span className="unit">{currency} at ask</span></span>
       {sum.cost !== undefined && <span><b>{formatAmount(sum.cost, currency)}</b> <span className="unit">{currency} cost</span></span>}
       <span className="grow" /><div className="w-[180px]"><BalanceBar parts={sum.bar} size="foot" /></div>
       <span><b>safe {formatCarats(sum.bar.safe)}, out {formatCarats(sum.bar.out)}</b> <span className="unit">ct</span></span>

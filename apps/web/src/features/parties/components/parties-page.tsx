@@ -51,8 +51,8 @@ function Table({ parties }: { parties: PartyRow[] }) {
           <tr key={party.number} className={`hoverable ${index === rows.current ? 'current' : ''}`} onClick={() => rows.setCurrent(index)}>
             <td className="lot"><Link to={`/customers/${party.number}`}>{party.name}</Link></td><td className="wide quiet">C {party.number}</td><td className="wide soft">{party.town}</td>
             <td className="n">{party.memosOpen}</td><td className="n">{formatCarats(party.out)}</td><td className="wide"><LimitBar exposure={party.exposure} scale={most} /></td>
-            <td className="n">{formatAmount(party.exposure.total, party.exposure.currency, true)} <span className="unit">{party.exposure.currency}</span></td>
-            <td className="n wide">{party.exposure.limit === null ? 'none set' : formatAmount(party.exposure.limit, party.exposure.currency, true)}</td>
+            <td className="n">{formatAmount(party.exposure.total, party.exposure.currency)} <span className="unit">{party.exposure.currency}</span></td>
+            <td className="n wide">{party.exposure.limit === null ? 'none set' : formatAmount(party.exposure.limit, party.exposure.currency)}</td>
             <td>{party.papers ? <span className="red">{party.papers}</span> : party.late > 0 ? <span className="red">{party.late} late</span> : <span className="quiet">{party.memosOpen > 0 ? 'in time' : 'nothing out'}</span>}</td>
           </tr>))}</tbody>
       </table>
