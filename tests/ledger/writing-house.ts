@@ -67,6 +67,21 @@ export class WritingHouse {
     return Number(rows[0]?.id);
   }
 
+  get urls() {
+    return this.#database.urls;
+  }
+
+  /** What a lot holds inside, over all places. */
+  async inside(lot: { id: number }): Promise<{ weight: number; pieces: number; cost: number }> {
+    const { rows } = await this.#owner.query<{ weight: string; pieces: string; cost: string }>(
+      `SELECT sum(weight) AS weight, sum(pieces) AS pieces, sum(cost) AS cost
+       FROM balance WHERE inside AND lot_id = $1`,
+      [lot.id],
+    );
+    const { weight, pieces, cost } = rows[0] ?? { weight: 0, pieces: 0, cost: 0 };
+    return { weight: Number(weight), pieces: Number(pieces), cost: Number(cost) };
+  }
+
   /** A drawer, the laboratory and so on, by id. */
   async place(kind: string): Promise<{ id: number }> {
     return { id: await this.id('SELECT id FROM place WHERE kind = $1', kind) };

@@ -1,4 +1,5 @@
 import type { WeighBackRequest, WeighedBack } from '@foldwell/contracts';
+import { parcelAgrees, stoneAgrees } from '@foldwell/ledger';
 
 /** A line as the desk judges it; weights in thousandths of a carat. */
 export interface Expected {
@@ -28,7 +29,7 @@ export function judgeReading(line: Expected, reading: WeighBackRequest): Judged 
 /** A stone agrees by number and weight; where one disagrees the person says whose it is. */
 function judgeStone(line: Expected, { weight, pieces, reportRead, decision }: WeighBackRequest): Judged {
   const isOtherNumber = Boolean(reportRead && line.report) && !line.report.toUpperCase().endsWith((reportRead ?? '').trim().toUpperCase());
-  const isOtherWeight = Math.abs(weight - line.out) > line.stoneTolerance;
+  const isOtherWeight = !stoneAgrees(line.out, weight, line.stoneTolerance);
   const isShort = pieces !== undefined && pieces < line.outPieces;
   if (decision === 'not ours') return { outcome: 'suspected switch', pieces: 0 };
   if (decision === 'ours') return { outcome: isOtherWeight ? 'other weight' : 'agrees', pieces: line.outPieces };
@@ -39,7 +40,7 @@ function judgeStone(line: Expected, { weight, pieces, reportRead, decision }: We
 /** A parcel within tolerance is restated; outside it is short or over; counted pieces have no tolerance. */
 function judgeParcel(line: Expected, { weight, pieces: counted }: WeighBackRequest): Judged {
   const off = weight - line.out;
-  const isInside = Math.abs(off) <= line.parcelTolerance && Math.abs(line.restated - off) <= line.parcelTolerance;
+  const isInside = parcelAgrees({ expected: line.out, restatedBefore: line.restated }, weight, line.parcelTolerance);
   const follow = Math.min(line.outPieces, Math.max(0, Math.round((line.outPieces * weight) / Math.max(1, line.out))));
   const pieces = counted ?? (line.isEstimated && !isInside && off < 0 ? follow : line.outPieces);
   if (!line.isEstimated && pieces < line.outPieces) return { outcome: isInside && off >= 0 ? 'pieces short' : 'short', pieces };
