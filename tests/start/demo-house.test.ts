@@ -25,10 +25,23 @@ describe.each(isFull ? USERS : USERS.slice(0, 1))('npm start on a fresh clone as
     expect(last).toMatch(/^Foldwell is open at http:.*owner.*password/i);
   });
 
+  it('lets the owner in with the words that it says', async () => {
+    const [, email] = /Sign in as (\S+@\S+) /.exec(house.said()) ?? [];
+    const [, password] = /password of all is "(.+)"/.exec(house.said()) ?? [];
+    const answer = await fetch(`${address}/api/sign-in`, {
+      method: 'POST',
+      headers: { 'content-type': 'application/json' },
+      body: JSON.stringify({ email, password }),
+    });
+    expect(answer.status).toBe(204);
+  });
+
   it('serves its pages with headers that keep other sites out', async () => {
     const page = await fetch(address);
     expect(page.status).toBe(200);
-    expect(page.headers.get('content-security-policy')).toContain("default-src 'self'");
+    expect(page.headers.get('content-security-policy')).toMatch(
+      /default-src 'none'.*script-src 'self' 'nonce-/,
+    );
     expect(await page.text()).toContain('<!doctype html>');
   });
 
