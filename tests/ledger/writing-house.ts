@@ -89,7 +89,7 @@ export class WritingHouse {
 
   /** Previews an act on the balances as they are, writes it as `api`, and gives both. */
   async act(act: Act, person = 1): Promise<Written & { previewed: Sums; posted: Sums }> {
-    const before = await this.#preview();
+    const before = await this.#found(act);
     this.#acts += 1;
     const key = `act-${String(this.#acts).padStart(20, '0')}`;
     const { rows } = await this.#api.query<{ written: Written }>(
@@ -97,7 +97,7 @@ export class WritingHouse {
       [person, key, 'hash', JSON.stringify(act)],
     );
     const written = rows[0]?.written as Written;
-    const after = await this.#preview(written);
+    const after = await this.#found(act, written);
     const previewed = reckon(act, (lot, place) =>
       before.held(after.lotId(lot), after.placeId(place)),
     );
@@ -115,11 +115,13 @@ export class WritingHouse {
     return rows.map(({ row }) => row).sort();
   }
 
-  /** Places and balances as they are now, and how refs are found among them. */
-  async #preview(written?: Written): Promise<Found> {
+  /** Places, and balances of the lots of an act, as they are now; and how refs are found among them. */
+  async #found({ legs }: Act, written?: Written): Promise<Found> {
     const places = await this.#owner.query<PlaceRow>('SELECT id, kind, memo_id, inside FROM place');
+    const lots = legs.flatMap(({ lot }) => ('id' in lot ? [lot.id] : []));
     const balances = await this.#owner.query<BalanceRow>(
-      'SELECT lot_id, place_id, weight, pieces, cost FROM balance',
+      'SELECT lot_id, place_id, weight, pieces, cost FROM balance WHERE lot_id = ANY ($1)',
+      [lots],
     );
     return new Found(places.rows, balances.rows, written);
   }
