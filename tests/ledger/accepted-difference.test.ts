@@ -23,7 +23,7 @@ test('the cost of an accepted difference goes back to the lot where all of it li
   const person = { id: '2', name: 'Ben', roles: ['owner'], seesCost: true };
   const key = { personId: '2', key: 'an-answer-of-its-own', hash: 'hash' };
   const request = { answer: 'accepted', reason: 'weighed again' } as const;
-  await answerDifference({ db, person } as never, key, String(difference.id), request as never);
+  await answerDifference({ db, person } as never, key, String(difference.id), request);
   await db.destroy();
   expect(await story.house.inside(lot)).toEqual({ weight: 9920, pieces: 298, cost: 1_000_01 });
 });

@@ -8,14 +8,22 @@ import { buildServer } from './server.js';
 const config = readConfig();
 const db = await makeDataSource(config.databaseUrl).initialize();
 const { app, close } = buildServer(config, db);
-const server = createServer({ requestTimeout: 30_000, headersTimeout: 15_000, keepAliveTimeout: 5000, maxHeaderSize: 16_384 }, app);
+const server = createServer(
+  { requestTimeout: 30_000, headersTimeout: 15_000, keepAliveTimeout: 5000, maxHeaderSize: 16_384 },
+  app,
+);
 server.maxConnections = 500;
 server.on('error', (error: NodeJS.ErrnoException) => {
-  process.stderr.write(error.code === 'EADDRINUSE'
-    ? `Port ${config.port} is taken. Choose another with PORT.\n` : `${error.message}\n`);
+  process.stderr.write(
+    error.code === 'EADDRINUSE'
+      ? `Port ${config.port} is taken. Choose another with PORT.\n`
+      : `${error.message}\n`,
+  );
   process.exit(1);
 });
-server.listen(config.port, config.host, () => log({ level: 'info', listening: `${config.host}:${config.port}` }));
+server.listen(config.port, config.host, () =>
+  log({ level: 'info', listening: `${config.host}:${config.port}` }),
+);
 
 let isStopping = false;
 function stop(): void {

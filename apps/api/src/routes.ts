@@ -11,5 +11,13 @@ import type { Route } from './http/route.js';
 
 /** Every route of the API; the matrix of routes and roles is compared with this list. */
 export const routes: Route[] = [
-  ...peopleRoutes, ...houseRoutes, ...placeRoutes, ...partyRoutes, ...lotRoutes, ...pickUpRoutes, ...memoRoutes, ...returnRoutes, ...firstLightRoutes,
+  ...peopleRoutes,
+  ...houseRoutes,
+  ...placeRoutes,
+  ...partyRoutes,
+  ...lotRoutes,
+  ...pickUpRoutes,
+  ...memoRoutes,
+  ...returnRoutes,
+  ...firstLightRoutes,
 ];

@@ -29,13 +29,15 @@ const year = new DemoYear(house, diceFrom(option('seed', 20261201)), last);
 
 // Half is there on the first day; the rest is bought through the year.
 const opening = Math.round(lots / 2);
-for (let made = 0; made < opening; made += BATCH) await year.takeIn(first, 'opening', Math.min(BATCH, opening - made));
+for (let made = 0; made < opening; made += BATCH)
+  await year.takeIn(first, 'opening', Math.min(BATCH, opening - made));
 const buys = 26;
 for (let day = addDays(first, 1); day <= last; day = addDays(day, 1)) {
   const n = daysBetween(first, day);
   if (n % 14 === 1 && n < 14 * buys) {
     let toBuy = Math.round((lots - opening) / buys);
-    for (; toBuy > 0; toBuy -= BATCH) await year.takeIn(day, n % 98 === 57 ? 'consignment in' : 'purchase', Math.min(BATCH, toBuy));
+    for (; toBuy > 0; toBuy -= BATCH)
+      await year.takeIn(day, n % 98 === 57 ? 'consignment in' : 'purchase', Math.min(BATCH, toBuy));
   }
   if (day < last) await year.putAway(day);
   if (n % 2 === 0 || day > addDays(last, -20)) await year.send(day);
@@ -43,5 +45,7 @@ for (let day = addDays(first, 1); day <= last; day = addDays(day, 1)) {
 }
 await year.findDifferences(3);
 await db.destroy();
-const names = PEOPLE.map(({ name, roles }) => `${name.toLowerCase().replace('. ', '.')}@ostrey-tarn.example (${roles[0]})`).join(', ');
+const names = PEOPLE.map(
+  ({ name, roles }) => `${name.toLowerCase().replace('. ', '.')}@ostrey-tarn.example (${roles[0]})`,
+).join(', ');
 process.stdout.write(`Sign in as ${names}; the password of all is "${DEMO_PASSWORD}".\n`);

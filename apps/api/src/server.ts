@@ -28,7 +28,8 @@ export function buildServer(config: Config, db: DataSource): Server {
   app.set('trust proxy', config.trustedProxies);
   app.use(identify, ...securityHeaders(config));
   app.use((req, res, next) => {
-    if (['TRACE', 'TRACK', 'CONNECT'].includes(req.method)) sendProblem(res, 405, 'method', 'That is not done here.');
+    if (['TRACE', 'TRACK', 'CONNECT'].includes(req.method))
+      sendProblem(res, 405, 'method', 'That is not done here.');
     else next();
   });
   const session = sessions(config);
@@ -43,10 +44,17 @@ function identify(req: Request, res: Response, next: () => void): void {
   res.locals.requestId = randomUUID();
   res.setHeader('X-Request-Id', res.locals.requestId as string);
   const began = performance.now();
-  res.on('finish', () => log({
-    level: 'info', requestId: res.locals.requestId, method: req.method, route: res.locals.route ?? 'file',
-    person: res.locals.personId, status: res.statusCode, ms: Math.round(performance.now() - began),
-  }));
+  res.on('finish', () =>
+    log({
+      level: 'info',
+      requestId: res.locals.requestId,
+      method: req.method,
+      route: res.locals.route ?? 'file',
+      person: res.locals.personId,
+      status: res.statusCode,
+      ms: Math.round(performance.now() - began),
+    }),
+  );
   next();
 }
 
@@ -59,7 +67,9 @@ function api(db: DataSource, session: express.RequestHandler): Router {
   router.get('/health', health(db));
   router.use(express.json({ limit: '100kb', inflate: false, strict: true }), session);
   for (const route of routes) router[route.method](route.path, answering(route, db));
-  router.use((_req, res) => sendProblem(res, 404, 'not_found', 'There is nothing at that address.'));
+  router.use((_req, res) =>
+    sendProblem(res, 404, 'not_found', 'There is nothing at that address.'),
+  );
   return router;
 }
 
@@ -67,7 +77,8 @@ function answering(route: Route, db: DataSource) {
   return async (req: Request, res: Response): Promise<void> => {
     res.locals.route = route.path;
     for (const value of Object.values(req.query)) {
-      if (typeof value !== 'string') throw new Refusal(400, 'not_readable', 'Something in the address stands twice.');
+      if (typeof value !== 'string')
+        throw new Refusal(400, 'not_readable', 'Something in the address stands twice.');
     }
     refuseForgery(req);
     const person = await admit(req, db, route.allowed);

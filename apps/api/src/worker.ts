@@ -10,13 +10,14 @@ const AWAY_MS = 3000;
 
 let isStopping = false;
 let wake: () => void = () => undefined;
-const rest = (ms: number) => new Promise<void>((done) => {
-  const timer = setTimeout(done, ms);
-  wake = () => {
-    clearTimeout(timer);
-    done();
-  };
-});
+const rest = (ms: number) =>
+  new Promise<void>((done) => {
+    const timer = setTimeout(done, ms);
+    wake = () => {
+      clearTimeout(timer);
+      done();
+    };
+  });
 for (const signal of ['SIGTERM', 'SIGINT'] as const) {
   process.on(signal, () => {
     isStopping = true;
@@ -41,6 +42,8 @@ async function seal(): Promise<void> {
 }
 
 while (!isStopping) {
-  await seal().catch((error: unknown) => log({ level: 'error', worker: error instanceof Error ? error.message : 'away' }));
+  await seal().catch((error: unknown) =>
+    log({ level: 'error', worker: error instanceof Error ? error.message : 'away' }),
+  );
   if (!isStopping) await rest(AWAY_MS);
 }

@@ -11,11 +11,19 @@ import { router } from './app/router';
 import { Problem } from './lib/api-client';
 
 const client = new QueryClient({
-  defaultOptions: { queries: { retry: (count, error) => !(error instanceof Problem && error.body.status < 500) && count < 2, refetchOnWindowFocus: true, staleTime: 2000 } },
+  defaultOptions: {
+    queries: {
+      retry: (count, error) => !(error instanceof Problem && error.body.status < 500) && count < 2,
+      refetchOnWindowFocus: true,
+      staleTime: 2000,
+    },
+  },
 });
 
 createRoot(document.getElementById('root') as HTMLElement).render(
   <StrictMode>
-    <QueryClientProvider client={client}><RouterProvider router={router} /></QueryClientProvider>
+    <QueryClientProvider client={client}>
+      <RouterProvider router={router} />
+    </QueryClientProvider>
   </StrictMode>,
 );

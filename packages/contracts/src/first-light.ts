@@ -10,5 +10,13 @@ export interface FirstLight {
   under: Record<keyof Bar | 'whole', string>;
   memos: MemoRow[];
   differences: DifferenceRow[];
-  late: { party: string; partyNumber: string; days: number; memo: string; lastWord: string; value: number; currency: string }[];
+  late: {
+    party: string;
+    partyNumber: string;
+    days: number;
+    memo: string;
+    lastWord: string;
+    value: number;
+    currency: string;
+  }[];
 }

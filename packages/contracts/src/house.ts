@@ -21,7 +21,10 @@ export class SetRateRequest {
   @Length(3, 3, { message: 'A currency has three letters.' }) currency!: string;
   @IsDay() onDate!: string;
   /** Units of the base currency for one unit. */
-  @IsNumber({ maxDecimalPlaces: 8 }, { message: 'The rate is not a number with up to 8 decimals.' }) @Min(1e-8) @Max(1e10) rate!: number;
+  @IsNumber({ maxDecimalPlaces: 8 }, { message: 'The rate is not a number with up to 8 decimals.' })
+  @Min(1e-8)
+  @Max(1e10)
+  rate!: number;
 }
 
 export class StartSeriesRequest {

@@ -1,5 +1,16 @@
 import { Type } from 'class-transformer';
-import { ArrayMaxSize, ArrayMinSize, IsArray, IsBoolean, IsIn, IsInt, IsNumber, Max, Min, ValidateNested } from 'class-validator';
+import {
+  ArrayMaxSize,
+  ArrayMinSize,
+  IsArray,
+  IsBoolean,
+  IsIn,
+  IsInt,
+  IsNumber,
+  Max,
+  Min,
+  ValidateNested,
+} from 'class-validator';
 import { ORIGINS, type Origin } from '@foldwell/quantities';
 
 import { IsAmount, IsDay, IsPieces, IsWeight, IsWords, Optional } from './fields.js';
@@ -68,22 +79,31 @@ export class ParticularsRequest {
 }
 
 export class TakeInLot extends ParticularsRequest {
-  @IsIn(['stone', 'pair', 'parcel'], { message: 'A lot is a stone, a pair or set, or a parcel.' }) kind!: 'stone' | 'pair' | 'parcel';
+  @IsIn(['stone', 'pair', 'parcel'], { message: 'A lot is a stone, a pair or set, or a parcel.' })
+  kind!: 'stone' | 'pair' | 'parcel';
   @IsWeight() weight!: number;
   @IsPieces() pieces!: number;
   @Optional() @IsBoolean() isEstimated?: boolean;
-  @IsIn(ORIGINS, { message: 'Say whether it is natural, laboratory-grown or not tested.' }) origin!: Origin;
+  @IsIn(ORIGINS, { message: 'Say whether it is natural, laboratory-grown or not tested.' })
+  origin!: Origin;
   @Optional() @IsWords(200) treatment?: string;
   /** The place it goes to, by id. */
   @IsWords(20) place!: string;
   /** What it cost, in minor units of the base currency: for a carat, or the sum. */
   @Optional() @IsAmount() price?: number;
   @Optional() @IsAmount() sum?: number;
-  @Optional() @IsArray() @ArrayMaxSize(50) @ValidateNested({ each: true }) @Type(() => Member) members?: Member[];
+  @Optional()
+  @IsArray()
+  @ArrayMaxSize(50)
+  @ValidateNested({ each: true })
+  @Type(() => Member)
+  members?: Member[];
 }
 
 export class TakeInRequest {
-  @IsIn(['opening', 'purchase', 'consignment in'], { message: 'Goods come in as opening stock, bought, or consigned in.' })
+  @IsIn(['opening', 'purchase', 'consignment in'], {
+    message: 'Goods come in as opening stock, bought, or consigned in.',
+  })
   how!: 'opening' | 'purchase' | 'consignment in';
   /** Supplier or consignor, by number. */
   @Optional() @IsWords(20) party?: string;
@@ -94,7 +114,12 @@ export class TakeInRequest {
   /** One price for all of them, allotted by `shareBy`. */
   @Optional() @IsAmount() boxPrice?: number;
   @Optional() @IsIn(['weight', 'worth']) shareBy?: 'weight' | 'worth';
-  @IsArray() @ArrayMinSize(1) @ArrayMaxSize(500) @ValidateNested({ each: true }) @Type(() => TakeInLot) lots!: TakeInLot[];
+  @IsArray()
+  @ArrayMinSize(1)
+  @ArrayMaxSize(500)
+  @ValidateNested({ each: true })
+  @Type(() => TakeInLot)
+  lots!: TakeInLot[];
 }
 
 export class TransferLine {
@@ -108,7 +133,12 @@ export class TransferRequest {
   @IsWords(20) to!: string;
   @Optional() @IsDay() businessDate?: string;
   @Optional() @IsWords(400) reason?: string;
-  @IsArray() @ArrayMinSize(1) @ArrayMaxSize(500) @ValidateNested({ each: true }) @Type(() => TransferLine) lines!: TransferLine[];
+  @IsArray()
+  @ArrayMinSize(1)
+  @ArrayMaxSize(500)
+  @ValidateNested({ each: true })
+  @Type(() => TransferLine)
+  lines!: TransferLine[];
 }
 
 export class ReverseRequest {
@@ -199,7 +229,10 @@ export interface LotEntry {
 export interface LotDetail {
   row: LotRow;
   version: number;
-  particulars: ParticularsRequest & { members?: Member[]; reports?: { laboratory: string; number: string; standing: string }[] };
+  particulars: ParticularsRequest & {
+    members?: Member[];
+    reports?: { laboratory: string; number: string; standing: string }[];
+  };
   takenInOn: string | null;
   source: string | null;
   sourcePaper: string;

@@ -1,5 +1,17 @@
 import { Type } from 'class-transformer';
-import { ArrayMaxSize, ArrayMinSize, IsArray, IsBoolean, IsInt, IsObject, IsString, Max, MaxLength, Min, ValidateNested } from 'class-validator';
+import {
+  ArrayMaxSize,
+  ArrayMinSize,
+  IsArray,
+  IsBoolean,
+  IsInt,
+  IsObject,
+  IsString,
+  Max,
+  MaxLength,
+  Min,
+  ValidateNested,
+} from 'class-validator';
 
 import { IsAmount, IsDay, IsPieces, IsWeight, IsWords, Optional } from './fields.js';
 import type { Bar } from './lots.js';
@@ -31,8 +43,12 @@ export class BookMemoRequest {
   @Optional() @IsWords(20) draftId?: string;
   /** An owner's reason to book it over a limit or with lapsed papers. */
   @Optional() @IsWords(400) releaseReason?: string;
-  @IsArray() @ArrayMinSize(1, { message: 'A memo needs at least one line.' }) @ArrayMaxSize(500)
-  @ValidateNested({ each: true }) @Type(() => MemoLineRequest) lines!: MemoLineRequest[];
+  @IsArray()
+  @ArrayMinSize(1, { message: 'A memo needs at least one line.' })
+  @ArrayMaxSize(500)
+  @ValidateNested({ each: true })
+  @Type(() => MemoLineRequest)
+  lines!: MemoLineRequest[];
 }
 
 export class DraftRequest {
@@ -45,7 +61,11 @@ export class ReadLineRequest {
   @IsWords(200) text!: string;
   @Optional() @IsWords(20) party?: string;
   /** Lots already on the draft, with what of them. */
-  @IsArray() @ArrayMaxSize(500) @ValidateNested({ each: true }) @Type(() => MemoLineRequest) lines!: MemoLineRequest[];
+  @IsArray()
+  @ArrayMaxSize(500)
+  @ValidateNested({ each: true })
+  @Type(() => MemoLineRequest)
+  lines!: MemoLineRequest[];
 }
 
 export class ReasonRequest {
@@ -57,7 +77,12 @@ export class ExtendMemoRequest {
   @Optional() @IsDay() pricesUntil?: string;
   @IsWords(400) reason!: string;
   /** Only these lines; the whole memo without. */
-  @Optional() @IsArray() @ArrayMaxSize(500) @IsString({ each: true }) @MaxLength(20, { each: true }) lots?: string[];
+  @Optional()
+  @IsArray()
+  @ArrayMaxSize(500)
+  @IsString({ each: true })
+  @MaxLength(20, { each: true })
+  lots?: string[];
 }
 
 export class NewPrice {
@@ -68,7 +93,12 @@ export class NewPrice {
 
 export class RePriceMemoRequest {
   @IsWords(400) reason!: string;
-  @IsArray() @ArrayMinSize(1) @ArrayMaxSize(500) @ValidateNested({ each: true }) @Type(() => NewPrice) lines!: NewPrice[];
+  @IsArray()
+  @ArrayMinSize(1)
+  @ArrayMaxSize(500)
+  @ValidateNested({ each: true })
+  @Type(() => NewPrice)
+  lines!: NewPrice[];
 }
 
 export class HandOverRequest {
@@ -88,7 +118,12 @@ export class KeepLine {
 
 export class KeepRequest {
   @Optional() @IsDay() businessDate?: string;
-  @IsArray() @ArrayMinSize(1) @ArrayMaxSize(500) @ValidateNested({ each: true }) @Type(() => KeepLine) lines!: KeepLine[];
+  @IsArray()
+  @ArrayMinSize(1)
+  @ArrayMaxSize(500)
+  @ValidateNested({ each: true })
+  @Type(() => KeepLine)
+  lines!: KeepLine[];
 }
 
 export class WordsRequest {

@@ -14,7 +14,10 @@ export class ChangePartyRequest {
   @Optional() @IsWords(100) town?: string;
   @Optional() @IsWords(100) country?: string;
   @Optional() @IsWords(400) address?: string;
-  @Optional() @ValidateIf((party: ChangePartyRequest) => party.email !== '') @IsEmail({}, { message: 'That is not an e-mail address.' }) email?: string;
+  @Optional()
+  @ValidateIf((party: ChangePartyRequest) => party.email !== '')
+  @IsEmail({}, { message: 'That is not an e-mail address.' })
+  email?: string;
   @Optional() @IsWords(60) phone?: string;
   @Optional() @IsWords(100) contact?: string;
   @Optional() @IsWords(60) taxNumber?: string;
@@ -59,9 +62,22 @@ export interface PartyRow {
 
 export interface PartyDetail extends PartyRow {
   version: number;
-  particulars: Required<Omit<ChangePartyRequest, 'isCustomer' | 'isSupplier' | 'isConsignor' | 'isBroker' | 'isLaboratory' | 'isWorkshop'>>;
+  particulars: Required<
+    Omit<
+      ChangePartyRequest,
+      'isCustomer' | 'isSupplier' | 'isConsignor' | 'isBroker' | 'isLaboratory' | 'isWorkshop'
+    >
+  >;
   memos: MemoRow[];
-  holds: { lot: string; what: string; memo: string; pieces: number; weight: number; value: number; due: string }[];
+  holds: {
+    lot: string;
+    what: string;
+    memo: string;
+    pieces: number;
+    weight: number;
+    value: number;
+    due: string;
+  }[];
   /** Of what we sent over all memos: what was kept, in thousandths of a carat; days out on average. */
   keeps: { sent: number; kept: number; memos: number; daysOut: number | null; differences: number };
 }

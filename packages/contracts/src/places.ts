@@ -3,7 +3,9 @@ import { IsBoolean, IsIn } from 'class-validator';
 import { IsWords, Optional } from './fields.js';
 
 export class AddPlaceRequest {
-  @IsIn(['drawer', 'show', 'person', 'laboratory', 'workshop'], { message: 'A place is a drawer, a show, a person, a laboratory or a workshop.' })
+  @IsIn(['drawer', 'show', 'person', 'laboratory', 'workshop'], {
+    message: 'A place is a drawer, a show, a person, a laboratory or a workshop.',
+  })
   kind!: 'drawer' | 'show' | 'person' | 'laboratory' | 'workshop';
   @IsWords(60) name!: string;
   @Optional() @IsWords(20) safe?: string;

@@ -25,16 +25,28 @@ export class PutAwayRequest {
   /** The drawer it goes to, by id. */
   @IsWords(20) to!: string;
   @Optional() @IsDay() businessDate?: string;
-  @IsArray() @ArrayMinSize(1) @ArrayMaxSize(500) @ValidateNested({ each: true }) @Type(() => TransferLine) lines!: TransferLine[];
+  @IsArray()
+  @ArrayMinSize(1)
+  @ArrayMaxSize(500)
+  @ValidateNested({ each: true })
+  @Type(() => TransferLine)
+  lines!: TransferLine[];
 }
 
 export const ANSWERS = [
-  'customer keeps it', 'accepted', 'found again', 'record corrected', 'our short weighing', 'their short weighing',
-  'written off', 'other stone',
+  'customer keeps it',
+  'accepted',
+  'found again',
+  'record corrected',
+  'our short weighing',
+  'their short weighing',
+  'written off',
+  'other stone',
 ] as const;
 
 export class AnswerRequest {
-  @IsIn(ANSWERS, { message: 'That is not an answer to a difference.' }) answer!: (typeof ANSWERS)[number];
+  @IsIn(ANSWERS, { message: 'That is not an answer to a difference.' })
+  answer!: (typeof ANSWERS)[number];
   @Optional() @IsWords(400) reason?: string;
   @Optional() @IsDay() businessDate?: string;
 }
@@ -43,11 +55,36 @@ export class AnswerRequest {
 export interface WeighedBack {
   weighing: number;
   /** `asks` where the person must say whose stone it is before anything is posted. */
-  outcome: 'agrees' | 'restated' | 'short' | 'excess' | 'pieces short' | 'other weight' | 'suspected switch' | 'not found' | 'asks';
+  outcome:
+    | 'agrees'
+    | 'restated'
+    | 'short'
+    | 'excess'
+    | 'pieces short'
+    | 'other weight'
+    | 'suspected switch'
+    | 'not found'
+    | 'asks';
   says: string;
 }
 
 export interface ReturnsList {
-  memos: { number: string; party: string; due: string; out: number; onDesk: number; differences: number }[];
-  desk: { lot: string; what: string; memo: string | null; pieces: number; weight: number; placeId: string; place: string; since: string }[];
+  memos: {
+    number: string;
+    party: string;
+    due: string;
+    out: number;
+    onDesk: number;
+    differences: number;
+  }[];
+  desk: {
+    lot: string;
+    what: string;
+    memo: string | null;
+    pieces: number;
+    weight: number;
+    placeId: string;
+    place: string;
+    since: string;
+  }[];
 }

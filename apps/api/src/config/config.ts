@@ -26,7 +26,10 @@ export function setting(name: string, env = process.env): string {
 export function readConfig(env = process.env): Config {
   const sessionSecrets = setting('SESSION_SECRET', env).split(',');
   for (const secret of sessionSecrets) {
-    if (secret.length < 32 || KNOWN_DEFAULTS.some((known) => secret.toLowerCase().startsWith(known))) {
+    if (
+      secret.length < 32 ||
+      KNOWN_DEFAULTS.some((known) => secret.toLowerCase().startsWith(known))
+    ) {
       throw new Error('SESSION_SECRET must be at least 32 random characters.');
     }
   }
@@ -35,7 +38,8 @@ export function readConfig(env = process.env): Config {
     throw new Error('DATABASE_URL must name the role api, never the owner of the tables.');
   }
   return {
-    databaseUrl, sessionSecrets,
+    databaseUrl,
+    sessionSecrets,
     host: env.HOST ?? '127.0.0.1',
     port: Number(env.PORT ?? 4180),
     webDir: env.WEB_DIR ?? null,

@@ -14,8 +14,15 @@ pg.types.setTypeParser(pg.types.builtins.DATE, (text) => text);
  */
 export function makeDataSource(url: string, poolSize = 10): DataSource {
   return new DataSource({
-    type: 'postgres', url, entities: [Party, Person], migrations, migrationsTransactionMode: 'each',
-    synchronize: false, logging: false, poolSize, connectTimeoutMS: 3000,
+    type: 'postgres',
+    url,
+    entities: [Party, Person],
+    migrations,
+    migrationsTransactionMode: 'each',
+    synchronize: false,
+    logging: false,
+    poolSize,
+    connectTimeoutMS: 3000,
     extra: { idleTimeoutMillis: 10_000 },
     poolErrorHandler: () => undefined,
   });

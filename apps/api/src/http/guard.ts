@@ -19,7 +19,11 @@ export async function askerOf(req: Request, db: DataSource): Promise<Asker | nul
   const person = await db.getRepository(Person).findOneBy({ id: personId });
   if (!person || person.disabledAt) return null;
   if (person.mustChangePassword && !BEFORE_CHANGE.has(req.path)) {
-    throw new Refusal(403, 'must_change_password', 'Choose your own password first; this one was given to you.');
+    throw new Refusal(
+      403,
+      'must_change_password',
+      'Choose your own password first; this one was given to you.',
+    );
   }
   return { id: person.id, name: person.name, roles: person.roles, seesCost: maySeeCost(person) };
 }
@@ -30,7 +34,9 @@ export async function admit(req: Request, db: DataSource, allowed: Allowed): Pro
   if (allowed === 'anyone') return asker ?? SIGNED_OUT;
   if (!asker) throw new Refusal(401, 'signed_out', 'Sign in first. What you typed is kept here.');
   if (allowed !== 'signed-in' && !asker.roles.some((role) => allowed.includes(role))) {
-    throw new Refusal(403, 'not_yours', `That is for ${allowed.join(', ')}. Ask an owner.`, { allowed });
+    throw new Refusal(403, 'not_yours', `That is for ${allowed.join(', ')}. Ask an owner.`, {
+      allowed,
+    });
   }
   return asker;
 }
@@ -40,7 +46,10 @@ export function refuseForgery(req: Request): void {
   if (['GET', 'HEAD', 'OPTIONS'].includes(req.method)) return;
   const site = req.get('sec-fetch-site');
   const origin = req.get('origin');
-  if ((site && site !== 'same-origin' && site !== 'none') || (origin && new URL(origin).host !== req.get('host'))) {
+  if (
+    (site && site !== 'same-origin' && site !== 'none') ||
+    (origin && new URL(origin).host !== req.get('host'))
+  ) {
     throw new Refusal(403, 'other_site', 'The request came from another site.');
   }
   if (Number(req.get('content-length') ?? 0) > 0 && !req.is('application/json')) {
@@ -48,8 +57,15 @@ export function refuseForgery(req: Request): void {
   }
   // Signed out there is no session to forge; the origin check above stands for signing in.
   if (!req.session?.personId) return;
-  const [given, kept] = [Buffer.from(req.get('x-csrf-token') ?? ''), Buffer.from(req.session.csrf ?? '')];
+  const [given, kept] = [
+    Buffer.from(req.get('x-csrf-token') ?? ''),
+    Buffer.from(req.session.csrf ?? ''),
+  ];
   if (given.length !== kept.length || !timingSafeEqual(given, kept)) {
-    throw new Refusal(403, 'token_missing', 'This page is older than your sign-in. Load it again; what you typed is kept.');
+    throw new Refusal(
+      403,
+      'token_missing',
+      'This page is older than your sign-in. Load it again; what you typed is kept.',
+    );
   }
 }

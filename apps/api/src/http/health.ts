@@ -11,9 +11,15 @@ export function health(db: DataSource): RequestHandler {
     try {
       const [row] = await db.query<{ n: number }[]>('SELECT count(*)::int AS n FROM migrations');
       const waiting = migrations.length - (row?.n ?? 0);
-      res.json({ status: 'ok', database: 'ok', migrations: waiting === 0 ? 'all applied' : `${waiting} to apply` });
+      res.json({
+        status: 'ok',
+        database: 'ok',
+        migrations: waiting === 0 ? 'all applied' : `${waiting} to apply`,
+      });
     } catch {
-      sendProblem(res, 503, 'not_now', 'The ledger can’t be reached just now.', { database: 'away' });
+      sendProblem(res, 503, 'not_now', 'The ledger can’t be reached just now.', {
+        database: 'away',
+      });
     }
   };
 }

@@ -7,19 +7,42 @@ import { Refusal } from './errors.js';
 import { log } from './log.js';
 
 const TITLES: Record<number, string> = {
-  400: 'Not readable', 401: 'Sign in', 403: 'Not yours to do', 404: 'Not there', 405: 'Not that way',
-  409: 'Not booked', 412: 'Changed meanwhile', 413: 'Too large', 415: 'Not JSON', 422: 'Not readable',
-  428: 'Version missing', 429: 'Wait', 500: 'Our fault', 503: 'Not now',
+  400: 'Not readable',
+  401: 'Sign in',
+  403: 'Not yours to do',
+  404: 'Not there',
+  405: 'Not that way',
+  409: 'Not booked',
+  412: 'Changed meanwhile',
+  413: 'Too large',
+  415: 'Not JSON',
+  422: 'Not readable',
+  428: 'Version missing',
+  429: 'Wait',
+  500: 'Our fault',
+  503: 'Not now',
 };
 
 /** Writes an error as application/problem+json. */
-export function sendProblem(res: Response, status: number, code: string, detail: string, extra: Record<string, unknown> = {}): void {
+export function sendProblem(
+  res: Response,
+  status: number,
+  code: string,
+  detail: string,
+  extra: Record<string, unknown> = {},
+): void {
   const body: ProblemBody = {
-    type: 'about:blank', title: TITLES[status] ?? 'Refused', status, detail,
-    instance: String(res.locals.requestId ?? ''), code, ...extra,
+    type: 'about:blank',
+    title: TITLES[status] ?? 'Refused',
+    status,
+    detail,
+    instance: String(res.locals.requestId ?? ''),
+    code,
+    ...extra,
   };
   if (status === 503) res.setHeader('Retry-After', '5');
-  if (status === 429 && typeof extra.retryAfter === 'number') res.setHeader('Retry-After', String(extra.retryAfter));
+  if (status === 429 && typeof extra.retryAfter === 'number')
+    res.setHeader('Retry-After', String(extra.retryAfter));
   res.status(status).type('application/problem+json').send(JSON.stringify(body));
 }
 
@@ -29,10 +52,20 @@ export const problems: ErrorRequestHandler = (error: unknown, _req, res, next) =
     next(error);
     return;
   }
-  if (error instanceof Refusal) sendProblem(res, error.status, error.code, error.sentence, error.extra);
+  if (error instanceof Refusal)
+    sendProblem(res, error.status, error.code, error.sentence, error.extra);
   else if (!sendDatabaseProblem(error, res) && !sendBodyProblem(error, res)) {
-    log({ level: 'error', requestId: res.locals.requestId, error: error instanceof Error ? error.stack : 'unknown' });
-    sendProblem(res, 500, 'our_fault', 'Something broke on our side. Nothing was booked. Try again, or tell the house.');
+    log({
+      level: 'error',
+      requestId: res.locals.requestId,
+      error: error instanceof Error ? error.stack : 'unknown',
+    });
+    sendProblem(
+      res,
+      500,
+      'our_fault',
+      'Something broke on our side. Nothing was booked. Try again, or tell the house.',
+    );
   }
 };
 
@@ -46,15 +79,37 @@ function sendDatabaseProblem(error: unknown, res: Response): boolean {
   const { code = '', constraint = '', detail } = databaseError(error);
   if (['23505', '23P01', '23514', '23503', '23502'].includes(code)) {
     const facts = code === '23514' ? readFacts(detail) : {};
-    const sentence = sentenceOf(constraint, facts) ?? 'A rule of the house says no. Nothing was booked.';
-    if (code === '23514' || code === '42501') log({ level: 'info', requestId: res.locals.requestId, refused: constraint });
-    sendProblem(res, code === '23503' || code === '23502' ? 422 : 409, constraint || 'rule', sentence, { facts });
-  } else if (/^22|^2201B/.test(code)) sendProblem(res, 422, 'not_readable', 'Something typed can’t be kept as it is. Look for odd characters or numbers.');
+    const sentence =
+      sentenceOf(constraint, facts) ?? 'A rule of the house says no. Nothing was booked.';
+    if (code === '23514' || code === '42501')
+      log({ level: 'info', requestId: res.locals.requestId, refused: constraint });
+    sendProblem(
+      res,
+      code === '23503' || code === '23502' ? 422 : 409,
+      constraint || 'rule',
+      sentence,
+      { facts },
+    );
+  } else if (/^22|^2201B/.test(code))
+    sendProblem(
+      res,
+      422,
+      'not_readable',
+      'Something typed can’t be kept as it is. Look for odd characters or numbers.',
+    );
   else if (code === '42501') {
     log({ level: 'error', requestId: res.locals.requestId, denied: constraint || code });
     sendProblem(res, 403, 'denied', 'The database does not let this happen.');
-  } else if (/^(40001|40P01|55P03|57014|53|57P0|08|ECONN|ENOTFOUND|EPIPE|ETIMEDOUT)/.test(code) || isAway(error)) {
-    sendProblem(res, 503, 'not_now', 'The ledger can’t be reached just now. Nothing was lost; try again in a few seconds.');
+  } else if (
+    /^(40001|40P01|55P03|57014|53|57P0|08|ECONN|ENOTFOUND|EPIPE|ETIMEDOUT)/.test(code) ||
+    isAway(error)
+  ) {
+    sendProblem(
+      res,
+      503,
+      'not_now',
+      'The ledger can’t be reached just now. Nothing was lost; try again in a few seconds.',
+    );
   } else return false;
   return true;
 }
@@ -66,7 +121,10 @@ export function databaseError(error: unknown): DatabaseError {
 }
 
 const isAway = (error: unknown) =>
-  error instanceof Error && /Connection terminated|timeout exceeded when trying to connect|not established|not queryable|Driver not Connected/i.test(error.message);
+  error instanceof Error &&
+  /Connection terminated|timeout exceeded when trying to connect|not established|not queryable|Driver not Connected/i.test(
+    error.message,
+  );
 
 function readFacts(detail: string | undefined): Record<string, string | number> {
   try {
@@ -78,8 +136,10 @@ function readFacts(detail: string | undefined): Record<string, string | number> 
 
 function sendBodyProblem(error: unknown, res: Response): boolean {
   const { type = '', status = 500 } = (error ?? {}) as { type?: string; status?: number };
-  if (type === 'entity.too.large') sendProblem(res, 413, 'too_large', 'That is more than 100 kB; nothing was kept.');
-  else if (type === 'encoding.unsupported' || type === 'charset.unsupported') sendProblem(res, 415, 'not_json', 'Only plain JSON in UTF-8 is read here.');
+  if (type === 'entity.too.large')
+    sendProblem(res, 413, 'too_large', 'That is more than 100 kB; nothing was kept.');
+  else if (type === 'encoding.unsupported' || type === 'charset.unsupported')
+    sendProblem(res, 415, 'not_json', 'Only plain JSON in UTF-8 is read here.');
   else if (status === 400) sendProblem(res, 400, 'not_readable', 'The request can’t be read.');
   else return false;
   return true;

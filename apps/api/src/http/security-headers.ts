@@ -17,13 +17,29 @@ export function securityHeaders(config: Config): RequestHandler[] {
         useDefaults: false,
         directives: {
           defaultSrc: ["'none'"],
-          scriptSrc: ["'self'", (_req, res) => `'nonce-${(res as { locals?: { nonce?: string } }).locals?.nonce ?? ''}'`],
-          styleSrc: ["'self'", (_req, res) => `'nonce-${(res as { locals?: { nonce?: string } }).locals?.nonce ?? ''}'`],
-          fontSrc: ["'self'"], imgSrc: ["'self'", 'data:'], connectSrc: ["'self'"], manifestSrc: ["'self'"],
-          formAction: ["'self'"], baseUri: ["'none'"], objectSrc: ["'none'"], frameAncestors: ["'none'"],
+          scriptSrc: [
+            "'self'",
+            (_req, res) =>
+              `'nonce-${(res as { locals?: { nonce?: string } }).locals?.nonce ?? ''}'`,
+          ],
+          styleSrc: [
+            "'self'",
+            (_req, res) =>
+              `'nonce-${(res as { locals?: { nonce?: string } }).locals?.nonce ?? ''}'`,
+          ],
+          fontSrc: ["'self'"],
+          imgSrc: ["'self'", 'data:'],
+          connectSrc: ["'self'"],
+          manifestSrc: ["'self'"],
+          formAction: ["'self'"],
+          baseUri: ["'none'"],
+          objectSrc: ["'none'"],
+          frameAncestors: ["'none'"],
         },
       },
-      strictTransportSecurity: config.isCookieSecure ? { maxAge: 31_536_000, includeSubDomains: true } : false,
+      strictTransportSecurity: config.isCookieSecure
+        ? { maxAge: 31_536_000, includeSubDomains: true }
+        : false,
       referrerPolicy: { policy: 'no-referrer' },
       crossOriginOpenerPolicy: { policy: 'same-origin' },
       crossOriginResourcePolicy: { policy: 'same-origin' },

@@ -20,26 +20,63 @@ export const ABSOLUTE_MS = 12 * 60 * 60_000;
 
 /** Sessions in PostgreSQL, with a pool of their own. */
 export function sessions(config: Config): { handler: RequestHandler; close(): Promise<void> } {
-  const pool = new Pool({ connectionString: config.databaseUrl, max: 4, connectionTimeoutMillis: 3000 });
+  const pool = new Pool({
+    connectionString: config.databaseUrl,
+    max: 4,
+    connectionTimeoutMillis: 3000,
+  });
   pool.on('error', () => undefined);
   const Store = connectPgSimple(session);
-  const store = new Store({ pool, tableName: 'session', createTableIfMissing: false, pruneSessionInterval: 900, errorLog: () => undefined });
+  const store = new Store({
+    pool,
+    tableName: 'session',
+    createTableIfMissing: false,
+    pruneSessionInterval: 900,
+    errorLog: () => undefined,
+  });
   const handler = session({
     name: config.isCookieSecure ? '__Host-fw' : 'fw',
-    secret: config.sessionSecrets, store, resave: false, saveUninitialized: false, rolling: true, unset: 'destroy',
-    cookie: { httpOnly: true, sameSite: 'lax', secure: config.isCookieSecure, path: '/', maxAge: IDLE_MS },
+    secret: config.sessionSecrets,
+    store,
+    resave: false,
+    saveUninitialized: false,
+    rolling: true,
+    unset: 'destroy',
+    cookie: {
+      httpOnly: true,
+      sameSite: 'lax',
+      secure: config.isCookieSecure,
+      path: '/',
+      maxAge: IDLE_MS,
+    },
   });
-  return { handler, close: async () => { store.close(); await pool.end(); } };
+  return {
+    handler,
+    close: async () => {
+      store.close();
+      await pool.end();
+    },
+  };
 }
 
 /** A new session under a new id, so that an id planted before sign-in is worth nothing. */
 export async function beginSession(req: Request, personId: string): Promise<void> {
-  await new Promise<void>((done, fail) => req.session.regenerate((error) => (error ? fail(error) : done())));
-  Object.assign(req.session, { personId, startedAt: Date.now(), csrf: randomBytes(24).toString('base64url') });
-  await new Promise<void>((done, fail) => req.session.save((error) => (error ? fail(error) : done())));
+  await new Promise<void>((done, fail) =>
+    req.session.regenerate((error) => (error ? fail(error) : done())),
+  );
+  Object.assign(req.session, {
+    personId,
+    startedAt: Date.now(),
+    csrf: randomBytes(24).toString('base64url'),
+  });
+  await new Promise<void>((done, fail) =>
+    req.session.save((error) => (error ? fail(error) : done())),
+  );
 }
 
 /** Ends this session; the cookie is worth nothing from now on. */
 export async function endSession(req: Request): Promise<void> {
-  await new Promise<void>((done, fail) => req.session.destroy((error) => (error ? fail(error) : done())));
+  await new Promise<void>((done, fail) =>
+    req.session.destroy((error) => (error ? fail(error) : done())),
+  );
 }

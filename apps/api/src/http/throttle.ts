@@ -10,26 +10,41 @@ const WINDOW = "interval '15 minutes'";
 export async function refuseWhileWaiting(db: DataSource, keys: string[]): Promise<void> {
   const [row] = await db.query<{ seconds: number | null }[]>(
     `SELECT ceil(extract(epoch FROM max(waits_until) - clock_timestamp()))::int AS seconds
-     FROM throttle WHERE key = ANY ($1) AND waits_until > clock_timestamp()`, [keys]);
+     FROM throttle WHERE key = ANY ($1) AND waits_until > clock_timestamp()`,
+    [keys],
+  );
   if (row?.seconds) {
-    throw new Refusal(429, 'wait', `Too many tries. Wait ${inWords(row.seconds)}, then try again.`, { retryAfter: row.seconds });
+    throw new Refusal(
+      429,
+      'wait',
+      `Too many tries. Wait ${inWords(row.seconds)}, then try again.`,
+      { retryAfter: row.seconds },
+    );
   }
 }
 
 /** Counts a failed guess; past the allowed number each further one doubles the wait. Returns how many tries are left. */
-export async function countFailure(db: DataSource, key: string, kind: keyof typeof ALLOWED): Promise<number> {
+export async function countFailure(
+  db: DataSource,
+  key: string,
+  kind: keyof typeof ALLOWED,
+): Promise<number> {
   const [row] = await db.query<{ failures: number }[]>(
     `INSERT INTO throttle AS t (key, failures) VALUES ($1, 1)
      ON CONFLICT (key) DO UPDATE SET
        failures = CASE WHEN t.since < clock_timestamp() - ${WINDOW} AND coalesce(t.waits_until, t.since) < clock_timestamp() THEN 1 ELSE t.failures + 1 END,
        since = CASE WHEN t.since < clock_timestamp() - ${WINDOW} AND coalesce(t.waits_until, t.since) < clock_timestamp() THEN clock_timestamp() ELSE t.since END
-     RETURNING failures`, [key]);
+     RETURNING failures`,
+    [key],
+  );
   const failures = row?.failures ?? 1;
   const over = failures - ALLOWED[kind];
   if (over >= 0) {
     // 10 minutes first, doubling to a day at most: a delay, never a lock.
-    await db.query(`UPDATE throttle SET waits_until = clock_timestamp() + least(interval '10 minutes' * power(2, $2::int), interval '24 hours') WHERE key = $1`,
-      [key, Math.min(over, 10)]);
+    await db.query(
+      `UPDATE throttle SET waits_until = clock_timestamp() + least(interval '10 minutes' * power(2, $2::int), interval '24 hours') WHERE key = $1`,
+      [key, Math.min(over, 10)],
+    );
   }
   return Math.max(0, -over);
 }

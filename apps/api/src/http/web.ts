@@ -6,7 +6,15 @@ import express, { Router } from 'express';
 export function webFiles(webDir: string): Router {
   const index = readFileSync(path.join(webDir, 'index.html'), 'utf8');
   const files = Router();
-  files.use('/assets', express.static(path.join(webDir, 'assets'), { immutable: true, maxAge: '1y', index: false, fallthrough: false }));
+  files.use(
+    '/assets',
+    express.static(path.join(webDir, 'assets'), {
+      immutable: true,
+      maxAge: '1y',
+      index: false,
+      fallthrough: false,
+    }),
+  );
   files.use(express.static(webDir, { index: false, maxAge: '1h' }));
   files.get('/{*page}', (_req, res) => {
     res.setHeader('Cache-Control', 'no-store');

@@ -6,9 +6,21 @@ export function Barcode({ text, height = 40 }: { text: string; height?: number }
   useEffect(() => {
     let isOpen = true;
     void import('bwip-js/browser').then(({ default: bwip }) => {
-      if (isOpen) setSvg(bwip.toSVG({ bcid: 'code128', text, height: 10, includetext: false, paddingwidth: 0 }));
+      if (isOpen)
+        setSvg(
+          bwip.toSVG({ bcid: 'code128', text, height: 10, includetext: false, paddingwidth: 0 }),
+        );
     });
-    return () => { isOpen = false; };
+    return () => {
+      isOpen = false;
+    };
   }, [text]);
-  return <img alt={`Bar code ${text}`} height={height} style={{ height, maxWidth: '100%' }} src={svg ? `data:image/svg+xml;utf8,${encodeURIComponent(svg)}` : undefined} />;
+  return (
+    <img
+      alt={`Bar code ${text}`}
+      height={height}
+      style={{ height, maxWidth: '100%' }}
+      src={svg ? `data:image/svg+xml;utf8,${encodeURIComponent(svg)}` : undefined}
+    />
+  );
 }

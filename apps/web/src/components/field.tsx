@@ -15,31 +15,84 @@ interface FieldProps extends Omit<InputHTMLAttributes<HTMLInputElement>, 'onChan
 }
 
 /** A label over a field; what is typed stays as typed, a problem is said under it. */
-export function Field({ label, value, onValue, unit, problem, help, isNumber, ref, className = '', ...rest }: FieldProps) {
+export function Field({
+  label,
+  value,
+  onValue,
+  unit,
+  problem,
+  help,
+  isNumber,
+  ref,
+  className = '',
+  ...rest
+}: FieldProps) {
   const id = useId();
   const about = problem ?? help;
   return (
-    <label className={`field ${isNumber ? 'number' : ''} ${problem ? 'bad' : ''} ${className}`} htmlFor={id}>
+    <label
+      className={`field ${isNumber ? 'number' : ''} ${problem ? 'bad' : ''} ${className}`}
+      htmlFor={id}
+    >
       <span>{label}</span>
       <span className="box">
-        <input id={id} ref={ref} value={value} onChange={(event) => onValue(event.target.value)} autoComplete="off" spellCheck={false}
-          aria-invalid={problem ? true : undefined} aria-describedby={about ? `${id}-about` : undefined} inputMode={isNumber ? 'decimal' : undefined} {...rest} />
+        <input
+          id={id}
+          ref={ref}
+          value={value}
+          onChange={(event) => onValue(event.target.value)}
+          autoComplete="off"
+          spellCheck={false}
+          aria-invalid={problem ? true : undefined}
+          aria-describedby={about ? `${id}-about` : undefined}
+          inputMode={isNumber ? 'decimal' : undefined}
+          {...rest}
+        />
         {unit && <span className="unit">{unit}</span>}
       </span>
-      {about && <span className="help" id={`${id}-about`} role={problem ? 'alert' : undefined}>{about}</span>}
+      {about && (
+        <span className="help" id={`${id}-about`} role={problem ? 'alert' : undefined}>
+          {about}
+        </span>
+      )}
     </label>
   );
 }
 
 /** One of a few; a real select, so that keys and readers work as people know them. */
-export function Choice({ label, value, onValue, options, help, problem, className = '' }: { label: string; value: string; onValue(value: string): void; options: readonly (readonly [value: string, words: string])[]; help?: ReactNode; problem?: string | undefined; className?: string }) {
+export function Choice({
+  label,
+  value,
+  onValue,
+  options,
+  help,
+  problem,
+  className = '',
+}: {
+  label: string;
+  value: string;
+  onValue(value: string): void;
+  options: readonly (readonly [value: string, words: string])[];
+  help?: ReactNode;
+  problem?: string | undefined;
+  className?: string;
+}) {
   const id = useId();
   return (
     <label className={`field ${problem ? 'bad' : ''} ${className}`} htmlFor={id}>
       <span>{label}</span>
       <span className="box">
-        <select id={id} value={value} onChange={(event) => onValue(event.target.value)} aria-invalid={problem ? true : undefined}>
-          {options.map(([one, words]) => <option key={one} value={one}>{words}</option>)}
+        <select
+          id={id}
+          value={value}
+          onChange={(event) => onValue(event.target.value)}
+          aria-invalid={problem ? true : undefined}
+        >
+          {options.map(([one, words]) => (
+            <option key={one} value={one}>
+              {words}
+            </option>
+          ))}
         </select>
       </span>
       {(problem ?? help) && <span className="help">{problem ?? help}</span>}
@@ -48,12 +101,34 @@ export function Choice({ label, value, onValue, options, help, problem, classNam
 }
 
 /** Several lines of text. */
-export function TextArea({ label, value, onValue, rows = 3, help, isReadOnly }: { label: string; value: string; onValue(value: string): void; rows?: number; help?: ReactNode; isReadOnly?: boolean }) {
+export function TextArea({
+  label,
+  value,
+  onValue,
+  rows = 3,
+  help,
+  isReadOnly,
+}: {
+  label: string;
+  value: string;
+  onValue(value: string): void;
+  rows?: number;
+  help?: ReactNode;
+  isReadOnly?: boolean;
+}) {
   const id = useId();
   return (
     <label className="field" htmlFor={id}>
       <span>{label}</span>
-      <span className="box"><textarea id={id} rows={rows} value={value} readOnly={isReadOnly} onChange={(event) => onValue(event.target.value)} /></span>
+      <span className="box">
+        <textarea
+          id={id}
+          rows={rows}
+          value={value}
+          readOnly={isReadOnly}
+          onChange={(event) => onValue(event.target.value)}
+        />
+      </span>
       {help && <span className="help">{help}</span>}
     </label>
   );

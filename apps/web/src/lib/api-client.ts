@@ -10,7 +10,9 @@ export class Problem extends Error {
 /** The API can't be reached; what was typed is still here. */
 export class Offline extends Error {
   constructor() {
-    super(`Not sent. The connection dropped at ${new Date().toTimeString().slice(0, 8)}. What you typed is kept here.`);
+    super(
+      `Not sent. The connection dropped at ${new Date().toTimeString().slice(0, 8)}. What you typed is kept here.`,
+    );
   }
 }
 
@@ -31,14 +33,22 @@ interface Asked {
 }
 
 /** Asks the API for JSON. Throws Problem for a refusal, Offline without an answer. */
-export async function api<T>(path: string, { method = 'GET', body, key, version, signal }: Asked = {}): Promise<T> {
+export async function api<T>(
+  path: string,
+  { method = 'GET', body, key, version, signal }: Asked = {},
+): Promise<T> {
   let response: Response;
   try {
     response = await fetch(`/api${path}`, {
-      method, signal: signal ?? null, credentials: 'same-origin',
+      method,
+      signal: signal ?? null,
+      credentials: 'same-origin',
       headers: {
-        Accept: 'application/json', ...(body !== undefined && { 'Content-Type': 'application/json' }), ...(method !== 'GET' && { 'X-Csrf-Token': csrf }),
-        ...(key && { 'Idempotency-Key': key }), ...(version !== undefined && { 'If-Match': `"v${version}"` }),
+        Accept: 'application/json',
+        ...(body !== undefined && { 'Content-Type': 'application/json' }),
+        ...(method !== 'GET' && { 'X-Csrf-Token': csrf }),
+        ...(key && { 'Idempotency-Key': key }),
+        ...(version !== undefined && { 'If-Match': `"v${version}"` }),
       },
       body: body === undefined ? null : JSON.stringify(body),
     });
@@ -55,6 +65,13 @@ function readProblem(text: string, status: number): ProblemBody {
   try {
     return JSON.parse(text) as ProblemBody;
   } catch {
-    return { type: 'about:blank', title: 'Not now', status, detail: 'The ledger can’t be reached just now. What you typed is kept here.', instance: '', code: 'not_now' };
+    return {
+      type: 'about:blank',
+      title: 'Not now',
+      status,
+      detail: 'The ledger can’t be reached just now. What you typed is kept here.',
+      instance: '',
+      code: 'not_now',
+    };
   }
 }

@@ -10,11 +10,15 @@ export function useKept<T>(name: string, empty: T): [T, (change: Partial<T>) => 
       return empty;
     }
   });
-  const change = useCallback((part: Partial<T>) => setValue((was) => {
-    const next = { ...was, ...part };
-    localStorage.setItem(key, JSON.stringify(next));
-    return next;
-  }), [key]);
+  const change = useCallback(
+    (part: Partial<T>) =>
+      setValue((was) => {
+        const next = { ...was, ...part };
+        localStorage.setItem(key, JSON.stringify(next));
+        return next;
+      }),
+    [key],
+  );
   const forget = useCallback(() => {
     localStorage.removeItem(key);
     setValue(empty);

@@ -1,4 +1,12 @@
-import { createContext, type ReactNode, useContext, useEffect, useMemo, useRef, useState } from 'react';
+import {
+  createContext,
+  type ReactNode,
+  useContext,
+  useEffect,
+  useMemo,
+  useRef,
+  useState,
+} from 'react';
 
 /** One key of a screen: what it is called on the key line and what it does. */
 export interface ScreenKey {
@@ -50,7 +58,9 @@ function listen(latest: Latest, onScan: Keys['onScan']): () => void {
   const onKey = (event: KeyboardEvent) => {
     if (event.isComposing || event.defaultPrevented) return;
     if (tookScan(event, burst, onScan, latest)) return;
-    const isField = event.target instanceof HTMLElement && event.target.matches('input, textarea, select, [contenteditable]');
+    const isField =
+      event.target instanceof HTMLElement &&
+      event.target.matches('input, textarea, select, [contenteditable]');
     const name = nameOf(event);
     if (isField && name === 'Esc') (event.target as HTMLElement).blur();
     const isPlain = !event.ctrlKey && !event.metaKey && !event.altKey;
@@ -61,11 +71,24 @@ function listen(latest: Latest, onScan: Keys['onScan']): () => void {
       return;
     }
     if (!isField && isPlain && lettersAreOn()) {
-      if (name === 'G') { goesAt = Date.now(); return; }
-      if (name === '/') { event.preventDefault(); latest.current.focusPickUp(); return; }
-      if (name === '?') { event.preventDefault(); latest.current.showAll(); return; }
+      if (name === 'G') {
+        goesAt = Date.now();
+        return;
+      }
+      if (name === '/') {
+        event.preventDefault();
+        latest.current.focusPickUp();
+        return;
+      }
+      if (name === '?') {
+        event.preventDefault();
+        latest.current.showAll();
+        return;
+      }
     }
-    const found = latest.current.shown.find((one) => one.key.split(' or ').includes(name) && (!isField || one.inFields));
+    const found = latest.current.shown.find(
+      (one) => one.key.split(' or ').includes(name) && (!isField || one.inFields),
+    );
     if (!found || (/^[A-Z]$/.test(name) && !lettersAreOn())) return;
     if (event.target instanceof HTMLButtonElement && (name === 'Enter' || name === 'Space')) return;
     if (event.target instanceof HTMLAnchorElement && name === 'Enter') return;
@@ -77,13 +100,25 @@ function listen(latest: Latest, onScan: Keys['onScan']): () => void {
 }
 
 /** A burst of characters ending in Enter is the scanner: to the screen's scan line, or else to Pick up. */
-function tookScan(event: KeyboardEvent, burst: { text: string; at: number }, onScan: Keys['onScan'], latest: Latest): boolean {
-  const isField = event.target instanceof HTMLElement && event.target.matches('input, textarea, select');
-  if (isField || event.ctrlKey || event.metaKey || event.altKey) { burst.text = ''; return false; }
+function tookScan(
+  event: KeyboardEvent,
+  burst: { text: string; at: number },
+  onScan: Keys['onScan'],
+  latest: Latest,
+): boolean {
+  const isField =
+    event.target instanceof HTMLElement && event.target.matches('input, textarea, select');
+  if (isField || event.ctrlKey || event.metaKey || event.altKey) {
+    burst.text = '';
+    return false;
+  }
   const now = performance.now();
   if (now - burst.at > SCAN_GAP_MS) burst.text = '';
   burst.at = now;
-  if (event.key.length === 1) { burst.text += event.key; return burst.text.length >= SCAN_LEAST; }
+  if (event.key.length === 1) {
+    burst.text += event.key;
+    return burst.text.length >= SCAN_LEAST;
+  }
   if (event.key !== 'Enter' || burst.text.length < SCAN_LEAST) return false;
   const text = burst.text;
   burst.text = '';
@@ -93,7 +128,15 @@ function tookScan(event: KeyboardEvent, burst: { text: string; at: number }, onS
 }
 
 function nameOf(event: KeyboardEvent): string {
-  const names: Record<string, string> = { ' ': 'Space', Escape: 'Esc', ArrowUp: '↑', ArrowDown: '↓', Delete: 'Del', PageUp: 'PgUp', PageDown: 'PgDn' };
+  const names: Record<string, string> = {
+    ' ': 'Space',
+    Escape: 'Esc',
+    ArrowUp: '↑',
+    ArrowDown: '↓',
+    Delete: 'Del',
+    PageUp: 'PgUp',
+    PageDown: 'PgDn',
+  };
   const name = names[event.key] ?? (event.key.length === 1 ? event.key.toUpperCase() : event.key);
   return event.ctrlKey || event.metaKey ? `Ctrl ${name}` : name;
 }
@@ -108,10 +151,14 @@ export function useKeys(keys: ScreenKey[], state = ''): void {
   latest.current = keys;
   const names = keys.map((key) => `${key.key} ${key.says}`).join('|');
   useEffect(() => {
-    context?.setKeys(latest.current.map((key, index) => ({ ...key, act: () => latest.current[index]?.act() })));
+    context?.setKeys(
+      latest.current.map((key, index) => ({ ...key, act: () => latest.current[index]?.act() })),
+    );
     return () => context?.setKeys([]);
   }, [names, context?.setKeys]);
-  useEffect(() => { context?.setState(state); }, [state, context?.setState]);
+  useEffect(() => {
+    context?.setState(state);
+  }, [state, context?.setState]);
 }
 
 /** Sends scans to this screen's own line while it is open. */
@@ -122,7 +169,9 @@ export function useScanner(take: (text: string) => void): void {
   useEffect(() => {
     if (!context) return;
     context.onScan.current = (text) => latest.current(text);
-    return () => { context.onScan.current = null; };
+    return () => {
+      context.onScan.current = null;
+    };
   }, [context?.onScan]);
 }
 
@@ -131,9 +180,22 @@ export function KeyLine() {
   const context = useContext(KeysContext);
   return (
     <footer className="key-line">
-      {context?.shown.filter(({ says }) => says !== '').map(({ key, says }) => <span key={key + says}><kbd>{key}</kbd>{says}</span>)}
-      <span><kbd>G then a letter</kbd>go to</span><span><kbd>?</kbd>all keys</span>
-      <span className="grow" /><span role="status">{context?.state}</span>
+      {context?.shown
+        .filter(({ says }) => says !== '')
+        .map(({ key, says }) => (
+          <span key={key + says}>
+            <kbd>{key}</kbd>
+            {says}
+          </span>
+        ))}
+      <span>
+        <kbd>G then a letter</kbd>go to
+      </span>
+      <span>
+        <kbd>?</kbd>all keys
+      </span>
+      <span className="grow" />
+      <span role="status">{context?.state}</span>
     </footer>
   );
 }

@@ -35,10 +35,23 @@ export function useMay(...roles: Me['roles']): boolean {
 export function SignedIn({ children }: { children: ReactNode }) {
   const me = useQuery(meQuery);
   const { pathname, search } = useLocation();
-  if (me.isPending) return <p className="p-6 soft" role="status">Opening the house.</p>;
-  if (me.error instanceof Problem && me.error.body.status === 401) return <Navigate to={`/sign-in?back=${encodeURIComponent(pathname + search)}`} replace />;
-  if (me.isError) return <p className="p-6" role="alert">{me.error.message}</p>;
-  if (me.data.mustChangePassword && pathname !== '/password') return <Navigate to="/password" replace />;
-  if (me.data.roles.every((role) => role === 'retailer') && pathname !== '/counter') return <Navigate to="/counter" replace />;
+  if (me.isPending)
+    return (
+      <p className="p-6 soft" role="status">
+        Opening the house.
+      </p>
+    );
+  if (me.error instanceof Problem && me.error.body.status === 401)
+    return <Navigate to={`/sign-in?back=${encodeURIComponent(pathname + search)}`} replace />;
+  if (me.isError)
+    return (
+      <p className="p-6" role="alert">
+        {me.error.message}
+      </p>
+    );
+  if (me.data.mustChangePassword && pathname !== '/password')
+    return <Navigate to="/password" replace />;
+  if (me.data.roles.every((role) => role === 'retailer') && pathname !== '/counter')
+    return <Navigate to="/counter" replace />;
   return <MeContext value={me.data}>{children}</MeContext>;
 }

@@ -3,7 +3,14 @@ import { expect, test } from 'vitest';
 import { warningsOf } from './checks.js';
 import { weightByFormula } from './formula-weight.js';
 import { girdleClass, girdleFactor } from './girdle-factor.js';
-import { depthPercent, pavilionDepthPercent, totalDepthPercent } from './proportions.js';
+import {
+  crownAngleOf,
+  crownHeightPercent,
+  depthPercent,
+  pavilionAngleOf,
+  pavilionDepthPercent,
+  totalDepthPercent,
+} from './proportions.js';
 import { isInSieveRange, plateOpening, readSieve, roundOfDiameter } from './sieve.js';
 import type { Stated } from './stated.js';
 
@@ -105,7 +112,9 @@ test('a girdle factor follows the girdle and the size of the stone', () => {
   ]);
 });
 
-test('proportions follow from each other', () => {
+test('proportions follow from each other, forth and back', () => {
+  expect(crownAngleOf(crownHeightPercent(57, 34.5), 57)).toBeCloseTo(34.5, 9);
+  expect(pavilionAngleOf(pavilionDepthPercent(40.8, 1), 1)).toBeCloseTo(40.8, 9);
   expect(pavilionDepthPercent(40.75, 2)).toBeCloseTo(42.221, 3);
   const stone = { table: 57, crownAngle: 34.5, pavilionAngle: 40.8, girdle: 3 };
   expect(totalDepthPercent(stone)).toBeCloseTo(60.935, 3);

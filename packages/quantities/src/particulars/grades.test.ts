@@ -6,6 +6,7 @@ import {
   COLOURS,
   CULET_MARKS,
   CULETS,
+  FANCY_INTENSITIES,
   FLUORESCENCES,
   GIRDLE_MARKS,
   GIRDLES,
@@ -27,6 +28,7 @@ test('every culet, girdle and fluorescence word has its rank', () => {
   expect(CULETS).toHaveLength(CULET_MARKS.length);
   expect(GIRDLES).toHaveLength(GIRDLE_MARKS.length);
   expect(rankOf(FLUORESCENCES, 'very strong')).toBe(5);
+  expect(rankOf(FANCY_INTENSITIES, 'Fancy Vivid')).toBe(7);
 });
 
 test('a make is read by word or mark', () => {

@@ -15,8 +15,6 @@ export const POINTS_PER_CARAT = 100;
 /** Four gem grains to the carat (G. F. Herbert Smith, Gem-Stones, London 1912, ch. XI). */
 export const GRAINS_PER_CARAT = 4;
 
-export const NO_WEIGHT = 0 as MilliCarats;
-
 /** Marks a whole number of thousandths as a weight; throws a RangeError on anything else. */
 export function milliCarats(value: number): MilliCarats {
   return exactInteger(value, 'weight in thousandths of a carat') as MilliCarats;

@@ -38,7 +38,15 @@ export class GuardLedger1764547500000 implements MigrationInterface {
 }
 
 const APPEND_ONLY = [
-  'movement', 'posting', 'weighing', 'document', 'memo_keep', 'seal', 'seal_member', 'audit', 'lot_change',
+  'movement',
+  'posting',
+  'weighing',
+  'document',
+  'memo_keep',
+  'seal',
+  'seal_member',
+  'audit',
+  'lot_change',
 ];
 const KEPT_BY_POSTINGS = ['balance', 'memo_line', 'difference'];
 

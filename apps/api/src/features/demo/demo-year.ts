@@ -20,7 +20,11 @@ export class DemoYear {
   #acts = 0;
   readonly #due: { day: string; number: string }[] = [];
 
-  constructor(readonly house: DemoHouse, readonly dice: Dice, readonly today: string) {}
+  constructor(
+    readonly house: DemoHouse,
+    readonly dice: Dice,
+    readonly today: string,
+  ) {}
 
   #key(personId: string): Key {
     this.#acts += 1;
@@ -28,11 +32,33 @@ export class DemoYear {
   }
 
   /** So many lots on one day, from nowhere (opening), a supplier or a consignor. */
-  async takeIn(day: string, how: 'opening' | 'purchase' | 'consignment in', count: number): Promise<void> {
+  async takeIn(
+    day: string,
+    how: 'opening' | 'purchase' | 'consignment in',
+    count: number,
+  ): Promise<void> {
     const ctx = this.house.as('S. Vareld');
-    const party = how === 'purchase' ? this.dice.pick(this.house.suppliers) : how === 'opening' ? undefined : this.dice.pick(this.house.consignors);
-    const lots = Array.from({ length: count }, () => makeLot(this.dice, this.dice.pick(this.house.drawers), (this.#serial += 1), how !== 'consignment in'));
-    await takeInLots(ctx, this.#key(ctx.person.id), { how, lots, businessDate: day, paper: how === 'opening' ? '' : `${how === 'purchase' ? 'INV' : 'CN'} ${2000 + this.#serial}`, ...(party && { party }) });
+    const party =
+      how === 'purchase'
+        ? this.dice.pick(this.house.suppliers)
+        : how === 'opening'
+          ? undefined
+          : this.dice.pick(this.house.consignors);
+    const lots = Array.from({ length: count }, () =>
+      makeLot(
+        this.dice,
+        this.dice.pick(this.house.drawers),
+        (this.#serial += 1),
+        how !== 'consignment in',
+      ),
+    );
+    await takeInLots(ctx, this.#key(ctx.person.id), {
+      how,
+      lots,
+      businessDate: day,
+      paper: how === 'opening' ? '' : `${how === 'purchase' ? 'INV' : 'CN'} ${2000 + this.#serial}`,
+      ...(party && { party }),
+    });
   }
 
   /** A memo of a few free lots; where the limit says no, the owner lets it pass now and then. */
@@ -40,7 +66,14 @@ export class DemoYear {
     const lines = await this.#freeLines(this.dice.between(2, 8));
     if (lines.length === 0) return;
     const due = addDays(day, this.dice.pick([7, 14, 14, 14, 21]));
-    const request: BookMemoRequest = { party: this.dice.pick(this.house.customers), due, businessDate: day, carriedBy: 'Hand, signed for', handedTo: 'the counter', lines };
+    const request: BookMemoRequest = {
+      party: this.dice.pick(this.house.customers),
+      due,
+      businessDate: day,
+      carriedBy: 'Hand, signed for',
+      handedTo: 'the counter',
+      lines,
+    };
     const dealer = this.house.as('I. Tarn');
     try {
       const { number } = await bookOut(dealer, this.#key(dealer.person.id), request);
@@ -49,23 +82,50 @@ export class DemoYear {
       if (databaseError(error).constraint !== 'party_credit_limit') throw error;
       if (!this.dice.percent(15)) return;
       const owner = this.house.as('R. Ostrey');
-      const { number } = await bookOut(owner, this.#key(owner.person.id), { ...request, releaseReason: 'Known to us for years; pays on the day.' });
+      const { number } = await bookOut(owner, this.#key(owner.person.id), {
+        ...request,
+        releaseReason: 'Known to us for years; pays on the day.',
+      });
       this.#due.push({ day: addDays(due, this.dice.between(-4, 5)), number });
     }
   }
 
   async #freeLines(count: number): Promise<MemoLineRequest[]> {
-    const rows = await this.house.as('I. Tarn').db.query<{ number: string; kind: string; weight: string; pieces: string; ask: string | null; place: string; is_estimated: boolean }[]>(
-      `SELECT * FROM (
+    const rows = await this.house
+      .as('I. Tarn')
+      .db.query<
+        {
+          number: string;
+          kind: string;
+          weight: string;
+          pieces: string;
+          ask: string | null;
+          place: string;
+          is_estimated: boolean;
+        }[]
+      >(
+        `SELECT * FROM (
          SELECT DISTINCT ON (l.id) l.number, l.kind, b.weight, b.pieces, l.ask_price AS ask, b.place_id AS place, l.is_estimated
          FROM balance b JOIN place p ON p.id = b.place_id JOIN lot l ON l.id = b.lot_id
          WHERE p.kind = 'drawer' AND b.weight > 0 AND l.ask_price IS NOT NULL ORDER BY l.id, b.weight DESC) x
-       ORDER BY md5(x.number || $1) LIMIT $2`, [String(this.#acts), count]);
+       ORDER BY md5(x.number || $1) LIMIT $2`,
+        [String(this.#acts), count],
+      );
     return rows.map((row) => {
       const [weight, pieces] = [Number(row.weight), Number(row.pieces)];
       const isPart = row.kind === 'parcel' && weight > 400 && pieces > 10;
-      const part = isPart ? Math.max(10, Math.round((weight * this.dice.between(15, 60)) / 1000) * 10) : weight;
-      return { lot: row.number, place: row.place, price: Number(row.ask), weight: part, pieces: isPart ? Math.max(1, Math.min(pieces - 1, Math.floor((pieces * part) / weight))) : pieces };
+      const part = isPart
+        ? Math.max(10, Math.round((weight * this.dice.between(15, 60)) / 1000) * 10)
+        : weight;
+      return {
+        lot: row.number,
+        place: row.place,
+        price: Number(row.ask),
+        weight: part,
+        pieces: isPart
+          ? Math.max(1, Math.min(pieces - 1, Math.floor((pieces * part) / weight)))
+          : pieces,
+      };
     });
   }
 
@@ -80,64 +140,134 @@ export class DemoYear {
 
   async #weighMemo(number: string, day: string): Promise<void> {
     const desk = this.house.as('J. Mavvin');
-    const lines = await desk.db.query<{ lot: string; kind: string; out: string; pieces: string; is_estimated: boolean; report: string }[]>(
+    const lines = await desk.db.query<
+      {
+        lot: string;
+        kind: string;
+        out: string;
+        pieces: string;
+        is_estimated: boolean;
+        report: string;
+      }[]
+    >(
       `SELECT l.number AS lot, l.kind, n.out_weight AS out, n.out_pieces AS pieces, l.is_estimated, l.report_number AS report FROM memo_line n JOIN memo m ON m.id = n.memo_id JOIN lot l ON l.id = n.lot_id
-       WHERE m.number = $1 AND n.out_weight > 0 ORDER BY n.position`, [number]);
+       WHERE m.number = $1 AND n.out_weight > 0 ORDER BY n.position`,
+      [number],
+    );
     for (const line of lines) {
       const [out, pieces] = [Number(line.out), Number(line.pieces)];
-      if (this.dice.percent(14)) await keepAct(desk, this.#key(desk.person.id), number, { businessDate: day, lines: [{ lot: line.lot, weight: out, pieces }] });
+      if (this.dice.percent(14))
+        await keepAct(desk, this.#key(desk.person.id), number, {
+          businessDate: day,
+          lines: [{ lot: line.lot, weight: out, pieces }],
+        });
       else await this.#weighLine(number, day, { ...line, weight: out, count: pieces });
     }
   }
 
-  async #weighLine(number: string, day: string, line: { lot: string; kind: string; weight: number; count: number; is_estimated: boolean; report: string }): Promise<void> {
+  async #weighLine(
+    number: string,
+    day: string,
+    line: {
+      lot: string;
+      kind: string;
+      weight: number;
+      count: number;
+      is_estimated: boolean;
+      report: string;
+    },
+  ): Promise<void> {
     const desk = this.house.as('J. Mavvin');
     const isParcel = line.kind === 'parcel';
-    const off = !isParcel ? 0 : this.dice.percent(5) && line.weight > 500 ? -this.dice.between(3, 9) * 10 : this.dice.pick([0, 0, 0, -10, 10]);
+    const off = !isParcel
+      ? 0
+      : this.dice.percent(5) && line.weight > 500
+        ? -this.dice.between(3, 9) * 10
+        : this.dice.pick([0, 0, 0, -10, 10]);
     const weight = Math.max(10, line.weight + off);
     const outcome = await weighBackLine(desk, this.#key(desk.person.id), number, {
-      lot: line.lot, weight, businessDate: day, ...(isParcel ? (line.is_estimated ? {} : { pieces: line.count }) : { reportRead: line.report }) });
-    if (outcome.outcome === 'short' && day < addDays(this.today, -4)) await this.#answer(line.lot, day, line.is_estimated);
+      lot: line.lot,
+      weight,
+      businessDate: day,
+      ...(isParcel
+        ? line.is_estimated
+          ? {}
+          : { pieces: line.count }
+        : { reportRead: line.report }),
+    });
+    if (outcome.outcome === 'short' && day < addDays(this.today, -4))
+      await this.#answer(line.lot, day, line.is_estimated);
   }
 
   async #answer(lot: string, day: string, isEstimated: boolean): Promise<void> {
     const owner = this.house.as('R. Ostrey');
-    const [difference] = await owner.db.query<{ id: string }[]>('SELECT d.id FROM difference d JOIN lot l ON l.id = d.lot_id WHERE l.number = $1 AND d.answer IS NULL ORDER BY d.id DESC LIMIT 1', [lot]);
+    const [difference] = await owner.db.query<{ id: string }[]>(
+      'SELECT d.id FROM difference d JOIN lot l ON l.id = d.lot_id WHERE l.number = $1 AND d.answer IS NULL ORDER BY d.id DESC LIMIT 1',
+      [lot],
+    );
     if (!difference) return;
-    await answerDifference(owner, this.#key(owner.person.id), difference.id, { // Of counted goods all pieces are back; weight alone is a weighing difference.
-      answer: isEstimated ? this.dice.pick(['accepted', 'accepted', 'customer keeps it', 'found again']) : 'accepted', reason: 'seen with the customer', businessDate: day });
+    await answerDifference(owner, this.#key(owner.person.id), difference.id, {
+      // Of counted goods all pieces are back; weight alone is a weighing difference.
+      answer: isEstimated
+        ? this.dice.pick(['accepted', 'accepted', 'customer keeps it', 'found again'])
+        : 'accepted',
+      reason: 'seen with the customer',
+      businessDate: day,
+    });
   }
 
   /** Everything on the desk goes to a drawer, but for what came back today. */
   async putAway(day: string): Promise<void> {
     const desk = this.house.as('J. Mavvin');
-    const lines = await desk.db.query<{ lot: string; from: string; weight: string; pieces: string; home: string | null }[]>(
+    const lines = await desk.db.query<
+      { lot: string; from: string; weight: string; pieces: string; home: string | null }[]
+    >(
       `SELECT l.number AS lot, b.place_id AS "from", b.weight, b.pieces, (SELECT d.place_id FROM balance d WHERE d.lot_id = l.id AND d.place_kind = 'drawer' ORDER BY d.weight DESC, d.place_id LIMIT 1) AS home
        FROM balance b JOIN place p ON p.id = b.place_id JOIN lot l ON l.id = b.lot_id
-       WHERE p.kind = 'return desk' AND b.weight > 0 AND b.pieces > 0 ORDER BY l.id LIMIT 200`);
+       WHERE p.kind = 'return desk' AND b.weight > 0 AND b.pieces > 0 ORDER BY l.id LIMIT 200`,
+    );
     const byHome = groupByHome(lines);
     for (const [home, together] of byHome) {
-      await moveLines(desk, this.#key(desk.person.id), { kind: 'put away', to: home || this.dice.pick(this.house.drawers), businessDate: day,
-        lines: together.map(({ lot, from, weight, pieces }) => ({ lot, from, weight: Number(weight), pieces: Number(pieces) })) });
+      await moveLines(desk, this.#key(desk.person.id), {
+        kind: 'put away',
+        to: home || this.dice.pick(this.house.drawers),
+        businessDate: day,
+        lines: together.map(({ lot, from, weight, pieces }) => ({
+          lot,
+          from,
+          weight: Number(weight),
+          pieces: Number(pieces),
+        })),
+      });
     }
   }
 
   /** On the last day something does not agree: the desk found it light. */
   async findDifferences(count: number): Promise<void> {
     const desk = this.house.as('J. Mavvin');
-    const lines = await desk.db.query<{ number: string; lot: string; out: string; pieces: string }[]>(
+    const lines = await desk.db.query<
+      { number: string; lot: string; out: string; pieces: string }[]
+    >(
       `SELECT m.number, l.number AS lot, n.out_weight AS out, n.out_pieces AS pieces FROM memo_line n JOIN memo m ON m.id = n.memo_id JOIN lot l ON l.id = n.lot_id
-       WHERE n.out_weight > 300 AND l.kind = 'parcel' AND l.is_estimated ORDER BY m.due, n.id LIMIT $1`, [count]);
+       WHERE n.out_weight > 300 AND l.kind = 'parcel' AND l.is_estimated ORDER BY m.due, n.id LIMIT $1`,
+      [count],
+    );
     for (const [index, line] of lines.entries()) {
-      await weighBackLine(desk, this.#key(desk.person.id), line.number, { lot: line.lot, weight: Number(line.out) - [80, 30, 50][index % 3]!, businessDate: this.today });
+      await weighBackLine(desk, this.#key(desk.person.id), line.number, {
+        lot: line.lot,
+        weight: Number(line.out) - [80, 30, 50][index % 3]!,
+        businessDate: this.today,
+      });
     }
-    if (lines.length === 0) throw new RuleBroken('demo', 'Nothing is out that could come back light.');
+    if (lines.length === 0)
+      throw new RuleBroken('demo', 'Nothing is out that could come back light.');
   }
 }
 
 /** Lines by the drawer where the rest of their lot lies, so that a parcel comes together again. */
 function groupByHome<T extends { home: string | null }>(lines: T[]): Map<string, T[]> {
   const groups = new Map<string, T[]>();
-  for (const line of lines) groups.set(line.home ?? '', [...(groups.get(line.home ?? '') ?? []), line]);
+  for (const line of lines)
+    groups.set(line.home ?? '', [...(groups.get(line.home ?? '') ?? []), line]);
   return groups;
 }

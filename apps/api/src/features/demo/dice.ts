@@ -14,5 +14,9 @@ export interface Dice {
 export function diceFrom(start: number): Dice {
   const generator = xoroshiro128plus(start);
   const between = (least: number, most: number) => uniformInt(generator, least, most);
-  return { between, percent: (chance) => between(1, 100) <= chance, pick: (from) => from[between(0, from.length - 1)] as (typeof from)[number] };
+  return {
+    between,
+    percent: (chance) => between(1, 100) <= chance,
+    pick: (from) => from[between(0, from.length - 1)] as (typeof from)[number],
+  };
 }

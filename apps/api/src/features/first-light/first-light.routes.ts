@@ -15,7 +15,8 @@ async function firstLight(_req: Request, { db }: Context): Promise<Answer> {
        count(*) FILTER (WHERE part_safe > 0) AS safe_lots, count(*) FILTER (WHERE part_returned > 0) AS desk_lots, count(*) FILTER (WHERE part_sold > 0) AS sold_lots,
        (SELECT count(DISTINCT safe) FROM place WHERE kind = 'drawer') AS safes,
        (SELECT count(*) FROM balance b JOIN place p ON p.id = b.place_id WHERE p.kind = 'quarantine' AND b.weight > 0) AS quarantine,
-       (SELECT coalesce(-sum(b.weight), 0) FROM balance b WHERE b.place_kind = 'loss') AS restated FROM lot`);
+       (SELECT coalesce(-sum(b.weight), 0) FROM balance b WHERE b.place_kind = 'loss') AS restated FROM lot`,
+  );
   const n = (name: string) => Number(sums?.[name] ?? 0);
   const memos = await memoRows(db, 'NOT m.is_settled', [], 'ORDER BY m.due, m.number LIMIT 500');
   const differences = await differenceRows(db, 'd.answer IS NULL', []);
@@ -23,19 +24,34 @@ async function firstLight(_req: Request, { db }: Context): Promise<Answer> {
     `SELECT y.name AS party, y.number AS "partyNumber", house_today() - m.due AS days, m.number::text AS memo,
        coalesce((SELECT to_char(x.at, 'FMDD Mon') || ', ' || left(x.words, 60) FROM memo_word x WHERE x.memo_id = m.id ORDER BY x.id DESC LIMIT 1), 'no word since ' || to_char(m.business_date, 'FMDD Mon')) AS "lastWord",
        (SELECT sum(memo_line_amount(k.price, k.agreed_sum, k.priced_weight, k.sent_weight, k.out_weight)) FROM memo_line k WHERE k.memo_id = m.id)::float8 AS value, m.currency
-     FROM memo m JOIN party y ON y.id = m.party_id WHERE NOT m.is_settled AND m.due < house_today() ORDER BY m.due LIMIT 40`);
+     FROM memo m JOIN party y ON y.id = m.party_id WHERE NOT m.is_settled AND m.due < house_today() ORDER BY m.due LIMIT 40`,
+  );
   const customers = new Set(memos.map((memo) => memo.party)).size;
   const body: FirstLight = {
-    today: await houseToday(db), whole: n('whole'), memos, differences, late,
-    bar: { safe: n('safe'), out: n('out'), returned: n('returned'), sold: n('sold'), missing: n('missing') },
+    today: await houseToday(db),
+    whole: n('whole'),
+    memos,
+    differences,
+    late,
+    bar: {
+      safe: n('safe'),
+      out: n('out'),
+      returned: n('returned'),
+      sold: n('sold'),
+      missing: n('missing'),
+    },
     under: {
       safe: `${n('safe_lots')} lots in ${n('safes')} safes${n('quarantine') > 0 ? `, ${n('quarantine')} in quarantine` : ''}`,
-      out: `${memos.length} memos, ${customers} customers`, returned: `${n('desk_lots')} lots on the return desk`,
-      sold: `${n('sold_lots')} lots kept or sold`, missing: differences.length === 0 ? 'nothing to answer' : `${differences.length} to answer`,
+      out: `${memos.length} memos, ${customers} customers`,
+      returned: `${n('desk_lots')} lots on the return desk`,
+      sold: `${n('sold_lots')} lots kept or sold`,
+      missing: differences.length === 0 ? 'nothing to answer' : `${differences.length} to answer`,
       whole: `taken in ${formatCarats(n('whole') - n('restated'))}, restated ${n('restated') === 0 ? '0 pt' : formatPoints(n('restated'))}`,
     },
   };
   return { body };
 }
 
-export const firstLightRoutes: Route[] = [{ method: 'get', path: '/first-light', allowed: STAFF, handle: firstLight }];
+export const firstLightRoutes: Route[] = [
+  { method: 'get', path: '/first-light', allowed: STAFF, handle: firstLight },
+];

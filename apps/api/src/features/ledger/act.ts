@@ -16,7 +16,14 @@ export interface Act extends Partial<Legs> {
   newDifferences?: NewDifference[];
   answers?: { differenceId: number; answer: string; reason?: string | undefined }[];
   weighings?: NewWeighing[];
-  keeps?: { lineId: number; weight: number; pieces: number; price?: number | null; agreedSum?: number | null; amount: number }[];
+  keeps?: {
+    lineId: number;
+    weight: number;
+    pieces: number;
+    price?: number | null;
+    agreedSum?: number | null;
+    amount: number;
+  }[];
   memoChange?: Record<string, unknown>;
   document?: { kind: string; snapshot: unknown };
   draftId?: string | undefined;

@@ -23,11 +23,17 @@ export function keyOf(req: Request, { person }: Context): Key {
  * Hands one act to the database's writer, the only way anything is booked. What two bookings took
  * from each other (serialization, deadlock) is tried again; a refusal is not.
  */
-export async function postAct({ db }: Pick<Context, 'db'>, { personId, key, hash }: Key, act: Act): Promise<Written> {
+export async function postAct(
+  { db }: Pick<Context, 'db'>,
+  { personId, key, hash }: Key,
+  act: Act,
+): Promise<Written> {
   for (let tries = 1; ; tries += 1) {
     try {
       const [row] = await db.query<{ written: Written }[]>(
-        'SELECT write_movement($1, $2, $3, $4) AS written', [personId, key, hash, JSON.stringify(act)]);
+        'SELECT write_movement($1, $2, $3, $4) AS written',
+        [personId, key, hash, JSON.stringify(act)],
+      );
       return (row as { written: Written }).written;
     } catch (error) {
       const { code = '' } = databaseError(error);
@@ -38,8 +44,13 @@ export async function postAct({ db }: Pick<Context, 'db'>, { personId, key, hash
 }
 
 /** The answer given before under this key, if any: asked before an act is planned on what stands now. */
-export async function answeredBefore({ db }: Pick<Context, 'db'>, { personId, key, hash }: Key): Promise<Written | null> {
+export async function answeredBefore(
+  { db }: Pick<Context, 'db'>,
+  { personId, key, hash }: Key,
+): Promise<Written | null> {
   const [row] = await db.query<{ answer: Written }[]>(
-    'SELECT answer FROM idempotency WHERE person_id = $1 AND key = $2 AND body_hash = $3', [personId, key, hash]);
+    'SELECT answer FROM idempotency WHERE person_id = $1 AND key = $2 AND body_hash = $3',
+    [personId, key, hash],
+  );
   return row?.answer ?? null;
 }

@@ -14,23 +14,35 @@ export async function changeLot(req: Request, { db, person }: Context): Promise<
     throw new Refusal(403, 'not_yours', 'The floor price is for owner. Ask an owner.');
   }
   const next = await db.transaction(async (tx) => {
-    const [was] = await tx.query<(Record<string, unknown> & { id: string; version: number; particulars: object })[]>(
-      'SELECT * FROM lot WHERE number = $1', [String(req.params.number).toUpperCase()]);
+    const [was] = await tx.query<
+      (Record<string, unknown> & { id: string; version: number; particulars: object })[]
+    >('SELECT * FROM lot WHERE number = $1', [String(req.params.number).toUpperCase()]);
     if (!was) throw new NotFound(`There is no lot ${String(req.params.number).slice(0, 20)}.`);
     const { particulars, ...columns } = columnsOf(request);
     const loose = { ...was.particulars, ...(particulars as object) };
     const names = Object.keys(columns);
     const set = names.map((name, index) => `${name} = $${index + 4}`);
-    const [updated] = await tx.query<[unknown, number]>(
-      `UPDATE lot SET ${['version = version + 1', 'particulars = $3', ...set].join(', ')} WHERE id = $1 AND version = $2`,
-      [was.id, version, loose, ...Object.values(columns)]).then(([, count]) => [count]);
-    if (updated === 0) throw changedMeanwhile({ version: was.version, particulars: particularsOf(was) });
-    const changes = [...names.map((name) => [name, was[name], columns[name]] as const),
-      ...Object.entries(particulars as object).map(([name, value]) => [name, (was.particulars as Record<string, unknown>)[name], value] as const)];
+    const [updated] = await tx
+      .query<[unknown, number]>(
+        `UPDATE lot SET ${['version = version + 1', 'particulars = $3', ...set].join(', ')} WHERE id = $1 AND version = $2`,
+        [was.id, version, loose, ...Object.values(columns)],
+      )
+      .then(([, count]) => [count]);
+    if (updated === 0)
+      throw changedMeanwhile({ version: was.version, particulars: particularsOf(was) });
+    const changes = [
+      ...names.map((name) => [name, was[name], columns[name]] as const),
+      ...Object.entries(particulars as object).map(
+        ([name, value]) =>
+          [name, (was.particulars as Record<string, unknown>)[name], value] as const,
+      ),
+    ];
     for (const [field, before, after] of changes) {
       if (JSON.stringify(plain(before)) === JSON.stringify(plain(after))) continue;
-      await tx.query('INSERT INTO lot_change (lot_id, person_id, field, was, became) VALUES ($1, $2, $3, $4, $5)',
-        [was.id, person.id, field, JSON.stringify(plain(before)), JSON.stringify(plain(after))]);
+      await tx.query(
+        'INSERT INTO lot_change (lot_id, person_id, field, was, became) VALUES ($1, $2, $3, $4, $5)',
+        [was.id, person.id, field, JSON.stringify(plain(before)), JSON.stringify(plain(after))],
+      );
     }
     return version + 1;
   });

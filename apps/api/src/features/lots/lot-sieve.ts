@@ -16,7 +16,8 @@ export function readSieve(query: Request['query']): Sieve {
     sieve.values.push(value);
     sieve.where.push(condition(`$${sieve.values.length}`));
   };
-  const text = (name: string) => (typeof query[name] === 'string' ? String(query[name]).trim().slice(0, 200) : '');
+  const text = (name: string) =>
+    typeof query[name] === 'string' ? String(query[name]).trim().slice(0, 200) : '';
 
   if (text('shape')) add((at) => `l.shape = ANY (${at})`, text('shape').split(','));
   if (text('kind')) add((at) => `l.kind = ANY (${at})`, text('kind').split(','));
@@ -35,8 +36,11 @@ export function readSieve(query: Request['query']): Sieve {
   });
   place(text('place'), add, sieve);
   if (text('q')) {
-    add((at) => `(l.number LIKE ${at} || '%' OR upper(l.report_number) LIKE upper(${at}) || '%' OR l.shape ILIKE ${at} || '%')`,
-      text('q').replace(/[%_\\]/g, '\\$&'));
+    add(
+      (at) =>
+        `(l.number LIKE ${at} || '%' OR upper(l.report_number) LIKE upper(${at}) || '%' OR l.shape ILIKE ${at} || '%')`,
+      text('q').replace(/[%_\\]/g, '\\$&'),
+    );
   }
   if (query.all !== '1') sieve.where.push('l.whole > 0');
   return sieve;
@@ -49,19 +53,31 @@ function grades(text: string, name: string, scale: readonly string[], add: Add):
   const [from = '', to = from] = text.split(/[-–]/);
   const [best, least] = [rankOf(scale, from), rankOf(scale, to)];
   if (best === null || least === null) {
-    throw new ValidationFailed([{ field: name, message: `${text} is not a range of ${name}, such as ${scale[3]}-${scale[6]}.` }]);
+    throw new ValidationFailed([
+      {
+        field: name,
+        message: `${text} is not a range of ${name}, such as ${scale[3]}-${scale[6]}.`,
+      },
+    ]);
   }
   add((at) => `l.${name}_from >= ${at}`, Math.min(best, least));
   add((at) => `coalesce(l.${name}_to, l.${name}_from) <= ${at}`, Math.max(best, least));
 }
 
-function numbers(text: string, name: string, scale: number, use: (from: number | null, to: number | null) => void): void {
+function numbers(
+  text: string,
+  name: string,
+  scale: number,
+  use: (from: number | null, to: number | null) => void,
+): void {
   if (!text) return;
   const [from = '', to = ''] = text.includes('-') ? text.split('-') : [text, text];
   const read = (part: string) => (part === '' ? null : Math.round(Number(part) * scale));
   const [low, high] = [read(from), read(to)];
   if ([low, high].some((one) => one !== null && !Number.isSafeInteger(one))) {
-    throw new ValidationFailed([{ field: name, message: `${text} is not a range of numbers, such as 0.50-2.04.` }]);
+    throw new ValidationFailed([
+      { field: name, message: `${text} is not a range of numbers, such as 0.50-2.04.` },
+    ]);
   }
   use(low, high);
 }
@@ -71,10 +87,17 @@ const PARTS = ['safe', 'out', 'returned', 'sold', 'missing'];
 function place(text: string, add: Add, sieve: Sieve): void {
   if (!text) return;
   if (PARTS.includes(text)) sieve.where.push(`l.part_${text} > 0`);
-  else if (/^\d{1,18}$/.test(text)) add((at) => `EXISTS (SELECT 1 FROM balance b WHERE b.lot_id = l.id AND b.place_id = ${at} AND b.weight > 0)`, text);
+  else if (/^\d{1,18}$/.test(text))
+    add(
+      (at) =>
+        `EXISTS (SELECT 1 FROM balance b WHERE b.lot_id = l.id AND b.place_id = ${at} AND b.weight > 0)`,
+      text,
+    );
   else {
-    add((at) => `EXISTS (SELECT 1 FROM balance b JOIN place p ON p.id = b.place_id
+    add(
+      (at) => `EXISTS (SELECT 1 FROM balance b JOIN place p ON p.id = b.place_id
       WHERE b.lot_id = l.id AND b.weight > 0 AND p.kind = 'drawer' AND lower(p.safe || p.name) LIKE lower(${at}) || '%')`,
-    text.replace(/^safe\s*/i, '').replace(/[%_\\]/g, '\\$&'));
+      text.replace(/^safe\s*/i, '').replace(/[%_\\]/g, '\\$&'),
+    );
   }
 }

@@ -1,4 +1,12 @@
-import { ExtendMemoRequest, HandOverRequest, KeepRequest, ReasonRequest, RePriceMemoRequest, WordsRequest, type MemoLine } from '@foldwell/contracts';
+import {
+  ExtendMemoRequest,
+  HandOverRequest,
+  KeepRequest,
+  ReasonRequest,
+  RePriceMemoRequest,
+  WordsRequest,
+  type MemoLine,
+} from '@foldwell/contracts';
 import { handOver, keep, type Line, together, undoMemo, unKeep } from '@foldwell/ledger';
 import { halfAwayFromZero } from '@foldwell/quantities';
 import type { Request } from 'express';
@@ -21,9 +29,22 @@ interface Found {
 export async function findMemo(ctx: Context, number: string): Promise<Found> {
   const memo = await memoByNumber(ctx.db, number);
   const lines = await linesOf(ctx.db, memo.id);
-  const ids = await lotIds(ctx, lines.map((line) => line.lot));
-  return { id: Number(memo.id), number: memo.number, lines: lines.map((line) => ({ ...line,
-    line: { lot: { id: ids.get(line.lot) ?? 0 }, memoId: Number(memo.id), lineId: Number(line.lineId) } })) };
+  const ids = await lotIds(
+    ctx,
+    lines.map((line) => line.lot),
+  );
+  return {
+    id: Number(memo.id),
+    number: memo.number,
+    lines: lines.map((line) => ({
+      ...line,
+      line: {
+        lot: { id: ids.get(line.lot) ?? 0 },
+        memoId: Number(memo.id),
+        lineId: Number(line.lineId),
+      },
+    })),
+  };
 }
 
 /** One line of a memo by its lot. */
@@ -39,12 +60,22 @@ export async function voidMemo(req: Request, ctx: Context): Promise<Answer> {
   const memo = await findMemo(ctx, String(req.params.number));
   const cameFrom = await ctx.db.query<{ lot: string; place_id: string }[]>(
     `SELECT l.number AS lot, g.place_id FROM posting g JOIN movement m ON m.id = g.movement_id JOIN lot l ON l.id = g.lot_id
-     WHERE m.memo_id = $1 AND m.kind = 'memo out' AND g.weight < 0`, [memo.id]);
+     WHERE m.memo_id = $1 AND m.kind = 'memo out' AND g.weight < 0`,
+    [memo.id],
+  );
   const lines = memo.lines.map(({ line, lot, flows, outPieces }) => ({
-    line, weight: flows.out, pieces: outPieces, cameFrom: { id: Number(cameFrom.find((from) => from.lot === lot)?.place_id ?? 0) } }));
+    line,
+    weight: flows.out,
+    pieces: outPieces,
+    cameFrom: { id: Number(cameFrom.find((from) => from.lot === lot)?.place_id ?? 0) },
+  }));
   const written = await postAct(ctx, keyOf(req, ctx), {
-    kind: 'memo void', memoId: memo.id, reason, ...undoMemo(lines.filter((line) => line.weight > 0)),
-    document: { kind: 'void memo', snapshot: { memo: `M ${memo.number}`, reason } } });
+    kind: 'memo void',
+    memoId: memo.id,
+    reason,
+    ...undoMemo(lines.filter((line) => line.weight > 0)),
+    document: { kind: 'void memo', snapshot: { memo: `M ${memo.number}`, reason } },
+  });
   return { status: 201, body: { movementId: String(written.movementId) } };
 }
 
@@ -54,9 +85,21 @@ export async function extendMemo(req: Request, ctx: Context): Promise<Answer> {
   const memo = await findMemo(ctx, String(req.params.number));
   const lines = (lots ?? []).map((lot) => ({ lineId: Number(lineOf(memo, lot).lineId), due }));
   const written = await postAct(ctx, keyOf(req, ctx), {
-    kind: null, memoId: memo.id, memoChange: { memoId: memo.id, ...(lots ? {} : { due }), pricesUntil, lines },
-    document: { kind: 'extended memo', snapshot: { memo: `M ${memo.number}`, due, pricesUntil: pricesUntil ?? null, reason, lots: lots ?? 'all' } },
-    audit: { action: 'memo extended' } });
+    kind: null,
+    memoId: memo.id,
+    memoChange: { memoId: memo.id, ...(lots ? {} : { due }), pricesUntil, lines },
+    document: {
+      kind: 'extended memo',
+      snapshot: {
+        memo: `M ${memo.number}`,
+        due,
+        pricesUntil: pricesUntil ?? null,
+        reason,
+        lots: lots ?? 'all',
+      },
+    },
+    audit: { action: 'memo extended' },
+  });
   return { status: 201, body: { number: written.document?.number } };
 }
 
@@ -65,13 +108,28 @@ export async function rePriceMemo(req: Request, ctx: Context): Promise<Answer> {
   const { reason, lines } = await readBody(req, RePriceMemoRequest);
   const memo = await findMemo(ctx, String(req.params.number));
   const changed = lines.map(({ lot, price, sum }) => {
-    if ((price === undefined) === (sum === undefined)) throw new ValidationFailed([{ field: 'lines', message: `${lot} needs a price per carat or a sum.` }]);
+    if ((price === undefined) === (sum === undefined))
+      throw new ValidationFailed([
+        { field: 'lines', message: `${lot} needs a price per carat or a sum.` },
+      ]);
     const line = lineOf(memo, lot);
-    return { lot, was: { price: line.price, sum: line.sum }, lineId: Number(line.lineId), ...(price === undefined ? { agreedSum: sum } : { price }) };
+    return {
+      lot,
+      was: { price: line.price, sum: line.sum },
+      lineId: Number(line.lineId),
+      ...(price === undefined ? { agreedSum: sum } : { price }),
+    };
   });
   const written = await postAct(ctx, keyOf(req, ctx), {
-    kind: null, memoId: memo.id, memoChange: { memoId: memo.id, lines: changed },
-    document: { kind: 're-priced memo', snapshot: { memo: `M ${memo.number}`, reason, lines: changed } }, audit: { action: 'memo re-priced' } });
+    kind: null,
+    memoId: memo.id,
+    memoChange: { memoId: memo.id, lines: changed },
+    document: {
+      kind: 're-priced memo',
+      snapshot: { memo: `M ${memo.number}`, reason, lines: changed },
+    },
+    audit: { action: 'memo re-priced' },
+  });
   return { status: 201, body: { number: written.document?.number } };
 }
 
@@ -81,41 +139,101 @@ export async function handOverMemo(req: Request, ctx: Context): Promise<Answer> 
   const memo = await findMemo(ctx, String(req.params.number));
   const party = await partyByNumber(ctx.db, number);
   const out = memo.lines.filter((line) => line.flows.out > 0);
-  if (out.length === 0) throw new RuleBroken('nothing_out', `Nothing of M ${memo.number} is still out.`);
+  if (out.length === 0)
+    throw new RuleBroken('nothing_out', `Nothing of M ${memo.number} is still out.`);
   const written = await postAct(ctx, keyOf(req, ctx), {
-    kind: 'memo out', reason, releaseReason, partyId: party.id,
-    newMemo: { partyId: party.id, due, currency: party.currency, remarks: `Transferred from M ${memo.number}`,
-      lines: out.map((line) => ({ lotId: (line.line.lot as { id: number }).id, price: line.price, agreedSum: line.sum,
-        pricedWeight: line.lotKind === 'parcel' ? line.flows.out : line.pricedWeight })) },
-    ...handOver(out.map((line) => ({ line: line.line, weight: line.flows.out, pieces: line.outPieces }))),
-    document: { kind: 'memo', snapshot: { from: `M ${memo.number}`, party: { number: party.number, name: party.name }, due, reason: reason ?? '',
-      lines: out.map((line, index) => ({ position: index + 1, lot: line.lot, what: line.what, pieces: line.outPieces, weight: line.flows.out, price: line.price, sum: line.sum })) } } });
+    kind: 'memo out',
+    reason,
+    releaseReason,
+    partyId: party.id,
+    newMemo: {
+      partyId: party.id,
+      due,
+      currency: party.currency,
+      remarks: `Transferred from M ${memo.number}`,
+      lines: out.map((line) => ({
+        lotId: (line.line.lot as { id: number }).id,
+        price: line.price,
+        agreedSum: line.sum,
+        pricedWeight: line.lotKind === 'parcel' ? line.flows.out : line.pricedWeight,
+      })),
+    },
+    ...handOver(
+      out.map((line) => ({ line: line.line, weight: line.flows.out, pieces: line.outPieces })),
+    ),
+    document: {
+      kind: 'memo',
+      snapshot: {
+        from: `M ${memo.number}`,
+        party: { number: party.number, name: party.name },
+        due,
+        reason: reason ?? '',
+        lines: out.map((line, index) => ({
+          position: index + 1,
+          lot: line.lot,
+          what: line.what,
+          pieces: line.outPieces,
+          weight: line.flows.out,
+          price: line.price,
+          sum: line.sum,
+        })),
+      },
+    },
+  });
   return { status: 201, body: { number: String(written.memoNumber) } };
 }
 
 /** Kept, whole or in part, at the memo price or a newly agreed one. */
 export async function keepLines(req: Request, ctx: Context): Promise<Answer> {
   const request = await readBody(req, KeepRequest);
-  return { status: 201, body: await keepAct(ctx, keyOf(req, ctx), String(req.params.number), request) };
+  return {
+    status: 201,
+    body: await keepAct(ctx, keyOf(req, ctx), String(req.params.number), request),
+  };
 }
 
 /** The act itself, as people and the demo house do it. */
-export async function keepAct(ctx: Context, key: Key, number: string, { lines, businessDate }: KeepRequest): Promise<{ movementId: string }> {
+export async function keepAct(
+  ctx: Context,
+  key: Key,
+  number: string,
+  { lines, businessDate }: KeepRequest,
+): Promise<{ movementId: string }> {
   const memo = await findMemo(ctx, number);
   const kept = lines.map((asked) => ({ asked, found: lineOf(memo, asked.lot) }));
   const written = await postAct(ctx, key, {
-    kind: 'kept', memoId: memo.id, businessDate,
-    ...together(...kept.map(({ asked: { weight, pieces }, found }) => keep(found.line, { weight, pieces }))),
-    keeps: kept.map(({ asked, found }) => ({ lineId: found.line.lineId, weight: asked.weight, pieces: asked.pieces,
-      price: asked.price ?? null, agreedSum: asked.sum ?? null, amount: keptAmount(found, asked) })) });
+    kind: 'kept',
+    memoId: memo.id,
+    businessDate,
+    ...together(
+      ...kept.map(({ asked: { weight, pieces }, found }) => keep(found.line, { weight, pieces })),
+    ),
+    keeps: kept.map(({ asked, found }) => ({
+      lineId: found.line.lineId,
+      weight: asked.weight,
+      pieces: asked.pieces,
+      price: asked.price ?? null,
+      agreedSum: asked.sum ?? null,
+      amount: keptAmount(found, asked),
+    })),
+  });
   return { movementId: String(written.movementId) };
 }
 
-function keptAmount(line: MemoLine, asked: { weight: number; price?: number | undefined; sum?: number | undefined }): number {
+function keptAmount(
+  line: MemoLine,
+  asked: { weight: number; price?: number | undefined; sum?: number | undefined },
+): number {
   if (asked.sum !== undefined) return asked.sum;
   const [w, sent] = [BigInt(asked.weight), BigInt(line.flows.sent)];
-  if (asked.price === undefined && line.sum !== null) return Number(halfAwayFromZero(BigInt(line.sum) * w, sent));
-  return Number(halfAwayFromZero(BigInt(asked.price ?? line.price ?? 0) * BigInt(line.pricedWeight) * w, sent * 1000n));
+  if (asked.price === undefined && line.sum !== null)
+    return Number(halfAwayFromZero(BigInt(line.sum) * w, sent));
+  return Number(
+    halfAwayFromZero(
+      BigInt(asked.price ?? line.price ?? 0) * BigInt(line.pricedWeight) * w,
+      sent * 1000n,
+    ),
+  );
 }
 
 /** A kept line is on memo again, before it is invoiced. */
@@ -124,16 +242,30 @@ export async function unKeepLines(req: Request, ctx: Context): Promise<Answer> {
   const memo = await findMemo(ctx, String(req.params.number));
   const back = lines.map((asked) => ({ asked, found: lineOf(memo, asked.lot) }));
   const written = await postAct(ctx, keyOf(req, ctx), {
-    kind: 'un-kept', memoId: memo.id, ...together(...back.map(({ asked: { weight, pieces }, found }) => unKeep(found.line, { weight, pieces }))),
-    keeps: back.map(({ asked, found }) => ({ lineId: found.line.lineId, weight: -asked.weight, pieces: -asked.pieces, amount: -keptAmount(found, asked) })) });
+    kind: 'un-kept',
+    memoId: memo.id,
+    ...together(
+      ...back.map(({ asked: { weight, pieces }, found }) => unKeep(found.line, { weight, pieces })),
+    ),
+    keeps: back.map(({ asked, found }) => ({
+      lineId: found.line.lineId,
+      weight: -asked.weight,
+      pieces: -asked.pieces,
+      amount: -keptAmount(found, asked),
+    })),
+  });
   return { status: 201, body: { movementId: String(written.movementId) } };
 }
 
 /** Writes down what we said or they said. */
 export async function writeWords(req: Request, { db, person }: Context): Promise<Answer> {
   const { words, isTheirs } = await readBody(req, WordsRequest);
-  if (words.trim() === '') throw new ValidationFailed([{ field: 'words', message: 'There is nothing to keep.' }]);
+  if (words.trim() === '')
+    throw new ValidationFailed([{ field: 'words', message: 'There is nothing to keep.' }]);
   const memo = await memoByNumber(db, String(req.params.number));
-  await db.query('INSERT INTO memo_word (memo_id, person_id, words, is_theirs) VALUES ($1, $2, $3, $4)', [memo.id, person.id, words.trim(), isTheirs ?? false]);
+  await db.query(
+    'INSERT INTO memo_word (memo_id, person_id, words, is_theirs) VALUES ($1, $2, $3, $4)',
+    [memo.id, person.id, words.trim(), isTheirs ?? false],
+  );
   return { status: 201 };
 }

@@ -14,7 +14,9 @@ export async function listDrafts(_req: Request, { db }: Context): Promise<Answer
 }
 
 export async function readDraft(req: Request, { db }: Context): Promise<Answer> {
-  const [row] = await db.query<DraftRow[]>(`${SELECT} WHERE d.id::text = $1`, [String(req.params.id)]);
+  const [row] = await db.query<DraftRow[]>(`${SELECT} WHERE d.id::text = $1`, [
+    String(req.params.id),
+  ]);
   if (!row) throw new NotFound('That draft is gone; it may be booked.');
   return { body: row, headers: { ETag: `"v${row.version}"` } };
 }
@@ -23,7 +25,9 @@ export async function readDraft(req: Request, { db }: Context): Promise<Answer> 
 export async function keepDraft(req: Request, { db, person }: Context): Promise<Answer> {
   const { body, party } = await readBody(req, DraftRequest);
   const [row] = await db.query<{ id: string; version: number }[]>(
-    'INSERT INTO draft (person_id, party_id, body) VALUES ($1, (SELECT id FROM party WHERE number::text = $2), $3) RETURNING id, version', [person.id, party ?? '', body]);
+    'INSERT INTO draft (person_id, party_id, body) VALUES ($1, (SELECT id FROM party WHERE number::text = $2), $3) RETURNING id, version',
+    [person.id, party ?? '', body],
+  );
   return { status: 201, body: row };
 }
 
@@ -32,7 +36,9 @@ export async function changeDraft(req: Request, { db }: Context): Promise<Answer
   const { body, party } = await readBody(req, DraftRequest);
   const [rows] = await db.query<[{ version: number }[], number]>(
     `UPDATE draft SET body = $3, party_id = (SELECT id FROM party WHERE number::text = $4), version = version + 1, at = clock_timestamp(), waits_because = ''
-     WHERE id::text = $1 AND version = $2 RETURNING version`, [String(req.params.id), version, body, party ?? '']);
+     WHERE id::text = $1 AND version = $2 RETURNING version`,
+    [String(req.params.id), version, body, party ?? ''],
+  );
   if (rows[0]) return { body: rows[0] };
   const { body: current } = await readDraft(req, { db } as Context);
   throw changedMeanwhile(current);

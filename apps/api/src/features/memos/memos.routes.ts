@@ -1,5 +1,13 @@
 import { type Route, STAFF } from '../../http/route.js';
-import { extendMemo, handOverMemo, keepLines, rePriceMemo, unKeepLines, voidMemo, writeWords } from './amend-memo.js';
+import {
+  extendMemo,
+  handOverMemo,
+  keepLines,
+  rePriceMemo,
+  unKeepLines,
+  voidMemo,
+  writeWords,
+} from './amend-memo.js';
 import { bookMemo } from './book-memo.js';
 import { changeDraft, dropDraft, keepDraft, listDrafts, readDraft } from './drafts.js';
 import { previewMemo } from './preview-memo.js';
@@ -25,7 +33,17 @@ export const memoRoutes: Route[] = [
   { method: 'post', path: '/memos/:number/extend', allowed: WRITERS, handle: extendMemo },
   { method: 'post', path: '/memos/:number/re-price', allowed: WRITERS, handle: rePriceMemo },
   { method: 'post', path: '/memos/:number/transfer', allowed: WRITERS, handle: handOverMemo },
-  { method: 'post', path: '/memos/:number/keep', allowed: ['owner', 'dealer', 'bookkeeper'], handle: keepLines },
-  { method: 'post', path: '/memos/:number/un-keep', allowed: ['owner', 'dealer', 'bookkeeper'], handle: unKeepLines },
+  {
+    method: 'post',
+    path: '/memos/:number/keep',
+    allowed: ['owner', 'dealer', 'bookkeeper'],
+    handle: keepLines,
+  },
+  {
+    method: 'post',
+    path: '/memos/:number/un-keep',
+    allowed: ['owner', 'dealer', 'bookkeeper'],
+    handle: unKeepLines,
+  },
   { method: 'post', path: '/memos/:number/words', allowed: STAFF, handle: writeWords },
 ];

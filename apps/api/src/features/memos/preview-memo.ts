@@ -13,30 +13,61 @@ export async function previewMemo(req: Request, { db }: Context): Promise<Answer
   const party = await partyByNumber(db, request.party);
   const exposure = await exposureOf(db, party);
   const stated = await db.query<{ number: string; stated: string | null; kind: string }[]>(
-    `SELECT number, kind, CASE WHEN kind = 'stone' THEN stated_weight END AS stated FROM lot WHERE number = ANY ($1)`, [request.lines.map((line) => line.lot)]);
-  const priced = (line: { lot: string; weight: number }) => Number(stated.find((lot) => lot.number === line.lot)?.stated ?? line.weight);
-  const amounts = request.lines.map((line) => line.sum ?? lineAmount(line.price ?? 0, priced(line)));
+    `SELECT number, kind, CASE WHEN kind = 'stone' THEN stated_weight END AS stated FROM lot WHERE number = ANY ($1)`,
+    [request.lines.map((line) => line.lot)],
+  );
+  const priced = (line: { lot: string; weight: number }) =>
+    Number(stated.find((lot) => lot.number === line.lot)?.stated ?? line.weight);
+  const amounts = request.lines.map(
+    (line) => line.sum ?? lineAmount(line.price ?? 0, priced(line)),
+  );
   const thisMemo = amounts.reduce((sum, amount) => sum + amount, 0);
   const after = exposure.total + thisMemo;
   const overBy = exposure.limit === null ? 0 : Math.max(0, after - exposure.limit);
   const last = request.lines.at(-1);
   const isParcel = stated.find((lot) => lot.number === last?.lot)?.kind === 'parcel';
-  const [house] = await db.query<{ step: number; today: string }[]>('SELECT step, house_today()::text AS today FROM house');
-  const owners = await db.query<{ name: string }[]>(`SELECT name FROM person WHERE 'owner' = ANY (roles) AND disabled_at IS NULL ORDER BY id`);
+  const [house] = await db.query<{ step: number; today: string }[]>(
+    'SELECT step, house_today()::text AS today FROM house',
+  );
+  const owners = await db.query<{ name: string }[]>(
+    `SELECT name FROM person WHERE 'owner' = ANY (roles) AND disabled_at IS NULL ORDER BY id`,
+  );
   const open = await memoRows(db, 'm.party_id = $1 AND NOT m.is_settled', [party.id]);
-  const lapsed = [['Identity papers', party.identityPapersUntil], ['Resale certificate', party.resaleCertificateUntil]].find(([, until]) => until && until < (house?.today ?? ''));
+  const lapsed = [
+    ['Identity papers', party.identityPapersUntil],
+    ['Resale certificate', party.resaleCertificateUntil],
+  ].find(([, until]) => until && until < (house?.today ?? ''));
   const body: MemoPreview = {
-    exposure, thisMemo, after, overBy, overMemoBy: exposure.memoLimit === null ? 0 : Math.max(0, thisMemo - exposure.memoLimit),
-    openMemos: open.map((memo) => ({ number: memo.number, weight: memo.flows.out, value: memo.value })),
-    lapsed: lapsed ? `${lapsed[0]} lapsed ${lapsed[1]}. Nothing leaves after that without an owner’s reason.` : null,
-    cutLastTo: last && isParcel && overBy > 0 ? cut(last, amounts.at(-1) ?? 0, overBy, house?.step ?? 10) : null,
-    owners: owners.map((owner) => owner.name), keeps: await keepsOf(db, party.id),
+    exposure,
+    thisMemo,
+    after,
+    overBy,
+    overMemoBy: exposure.memoLimit === null ? 0 : Math.max(0, thisMemo - exposure.memoLimit),
+    openMemos: open.map((memo) => ({
+      number: memo.number,
+      weight: memo.flows.out,
+      value: memo.value,
+    })),
+    lapsed: lapsed
+      ? `${lapsed[0]} lapsed ${lapsed[1]}. Nothing leaves after that without an owner’s reason.`
+      : null,
+    cutLastTo:
+      last && isParcel && overBy > 0
+        ? cut(last, amounts.at(-1) ?? 0, overBy, house?.step ?? 10)
+        : null,
+    owners: owners.map((owner) => owner.name),
+    keeps: await keepsOf(db, party.id),
   };
   return { body };
 }
 
 /** The most of the last line, in the house's step, that stays inside the limit; null where none does. */
-function cut(line: { weight: number; price?: number | undefined }, amount: number, overBy: number, step: number): number | null {
+function cut(
+  line: { weight: number; price?: number | undefined },
+  amount: number,
+  overBy: number,
+  step: number,
+): number | null {
   if (!line.price || amount <= overBy) return null;
   const most = Number((BigInt(amount - overBy) * 1000n) / BigInt(line.price));
   const stepped = Math.floor(most / step) * step;

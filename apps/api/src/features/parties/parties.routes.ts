@@ -6,5 +6,10 @@ export const partyRoutes: Route[] = [
   { method: 'get', path: '/parties', allowed: STAFF, handle: listParties },
   { method: 'post', path: '/parties', allowed: ['owner', 'dealer', 'buyer'], handle: addParty },
   { method: 'get', path: '/parties/:number', allowed: STAFF, handle: readParty },
-  { method: 'patch', path: '/parties/:number', allowed: ['owner', 'dealer', 'buyer'], handle: changeParty },
+  {
+    method: 'patch',
+    path: '/parties/:number',
+    allowed: ['owner', 'dealer', 'buyer'],
+    handle: changeParty,
+  },
 ];

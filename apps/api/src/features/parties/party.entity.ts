@@ -25,9 +25,14 @@ export class Party {
   @Column({ type: 'text' }) terms!: string;
   @Column({ type: 'bigint', name: 'credit_limit', nullable: true }) creditLimit!: string | null;
   @Column({ type: 'bigint', name: 'memo_limit', nullable: true }) memoLimit!: string | null;
-  @Column({ type: 'date', name: 'identity_papers_until', nullable: true }) identityPapersUntil!: string | null;
-  @Column({ type: 'date', name: 'resale_certificate_until', nullable: true }) resaleCertificateUntil!: string | null;
-  @Column({ type: 'date', name: 'sanctions_checked_on', nullable: true }) sanctionsCheckedOn!: string | null;
+  @Column({ type: 'date', name: 'identity_papers_until', nullable: true }) identityPapersUntil!:
+    | string
+    | null;
+  @Column({ type: 'date', name: 'resale_certificate_until', nullable: true })
+  resaleCertificateUntil!: string | null;
+  @Column({ type: 'date', name: 'sanctions_checked_on', nullable: true }) sanctionsCheckedOn!:
+    | string
+    | null;
   @Column({ type: 'boolean', name: 'is_muted' }) isMuted!: boolean;
   @Column({ type: 'text' }) note!: string;
   @Column({ type: 'integer', default: 1 }) version!: number;

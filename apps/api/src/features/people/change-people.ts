@@ -17,15 +17,22 @@ export async function addPerson(req: Request, { db, person }: Context): Promise<
     const partyId = request.roles.includes('retailer') ? await partyNamed(tx, request.party) : null;
     const [row] = await tx.query<{ id: string }[]>(
       `INSERT INTO person (name, email, roles, password_hash, must_change_password, party_id) VALUES ($1, $2, $3, $4, true, $5) RETURNING id`,
-      [request.name.trim(), request.email, request.roles, hash, partyId]);
+      [request.name.trim(), request.email, request.roles, hash, partyId],
+    );
     await audit(tx, person.id, 'person added', row?.id ?? '', { roles: request.roles });
     return { status: 201, body: { id: row?.id } };
   });
 }
 
 async function partyNamed(tx: EntityManager, number: string | undefined): Promise<string> {
-  const [party] = await tx.query<{ id: string }[]>('SELECT id FROM party WHERE number::text = $1', [number ?? '']);
-  if (!party) throw new RuleBroken('party_missing', 'A retailer belongs to a customer; say which, by number.');
+  const [party] = await tx.query<{ id: string }[]>('SELECT id FROM party WHERE number::text = $1', [
+    number ?? '',
+  ]);
+  if (!party)
+    throw new RuleBroken(
+      'party_missing',
+      'A retailer belongs to a customer; say which, by number.',
+    );
   return party.id;
 }
 
@@ -34,7 +41,8 @@ export async function changePerson(req: Request, { db, person }: Context): Promi
   const version = requireVersion(req);
   const request = await readBody(req, ChangePersonRequest);
   const id = String(req.params.id);
-  if (id === person.id) throw new RuleBroken('own_role', 'Nobody changes his own roles. Ask another owner.');
+  if (id === person.id)
+    throw new RuleBroken('own_role', 'Nobody changes his own roles. Ask another owner.');
   await db.transaction(async (tx) => {
     // One lock for all changes of people: two owners can't take each other away at once.
     await tx.query('SELECT pg_advisory_xact_lock(hashtext($1))', ['people']);
@@ -44,12 +52,16 @@ export async function changePerson(req: Request, { db, person }: Context): Promi
     const roles = request.roles ?? found.roles;
     const isActive = request.isActive ?? !found.disabledAt;
     if (!(isActive && roles.includes('owner')) && (await otherOwners(tx, id)) === 0) {
-      throw new RuleBroken('last_owner', `${found.name} is the last owner. Make somebody else an owner first.`);
+      throw new RuleBroken(
+        'last_owner',
+        `${found.name} is the last owner. Make somebody else an owner first.`,
+      );
     }
     await tx.query(
       `UPDATE person SET roles = $2, sees_cost = $3, version = version + 1,
          disabled_at = CASE WHEN $4 THEN NULL ELSE coalesce(disabled_at, clock_timestamp()) END WHERE id = $1`,
-      [id, roles, request.seesCost ?? found.seesCost, isActive]);
+      [id, roles, request.seesCost ?? found.seesCost, isActive],
+    );
     await tx.query(`DELETE FROM session WHERE sess ->> 'personId' = $1`, [id]);
     await audit(tx, person.id, 'person changed', id, { ...request });
   });
@@ -58,7 +70,9 @@ export async function changePerson(req: Request, { db, person }: Context): Promi
 
 async function otherOwners(tx: EntityManager, id: string): Promise<number> {
   const [row] = await tx.query<{ n: number }[]>(
-    `SELECT count(*)::int AS n FROM person WHERE id <> $1 AND disabled_at IS NULL AND 'owner' = ANY (roles)`, [id]);
+    `SELECT count(*)::int AS n FROM person WHERE id <> $1 AND disabled_at IS NULL AND 'owner' = ANY (roles)`,
+    [id],
+  );
   return row?.n ?? 0;
 }
 
@@ -71,9 +85,22 @@ export async function signOutPerson(req: Request, { db, person }: Context): Prom
 
 /** A person as the list shows him. */
 export function rowOf(person: Person) {
-  return { id: person.id, name: person.name, email: person.email, roles: person.roles, seesCost: person.seesCost,
-    isActive: !person.disabledAt, lastHereAt: person.lastHereAt?.toISOString() ?? null, version: person.version };
+  return {
+    id: person.id,
+    name: person.name,
+    email: person.email,
+    roles: person.roles,
+    seesCost: person.seesCost,
+    isActive: !person.disabledAt,
+    lastHereAt: person.lastHereAt?.toISOString() ?? null,
+    version: person.version,
+  };
 }
 
 const audit = (tx: EntityManager, by: string, action: string, subject: string, detail: object) =>
-  tx.query('INSERT INTO audit (person_id, action, subject, detail) VALUES ($1, $2, $3, $4)', [by, action, `person ${subject}`, detail]);
+  tx.query('INSERT INTO audit (person_id, action, subject, detail) VALUES ($1, $2, $3, $4)', [
+    by,
+    action,
+    `person ${subject}`,
+    detail,
+  ]);

@@ -34,9 +34,13 @@ function passwordProblem(password: string, about: string[]): string | null {
   if ([...password].length < SHORTEST) return `A password has at least ${SHORTEST} characters.`;
   if (bcrypt.truncates(password)) return 'A password has at most 72 bytes; yours is longer.';
   const plain = password.toLowerCase().replace(/[^a-z]/g, '');
-  const words = [...HOUSE_WORDS, ...about.flatMap((one) => one.toLowerCase().split(/[^a-z]+/)).filter((one) => one.length > 3)];
+  const words = [
+    ...HOUSE_WORDS,
+    ...about.flatMap((one) => one.toLowerCase().split(/[^a-z]+/)).filter((one) => one.length > 3),
+  ];
   const rest = words.reduce((left, word) => left.replaceAll(word, ''), plain);
-  if (new Set(password).size < 5 || (plain.length > 0 && rest.length < 4)) return 'That password is too easy to guess; words of the house alone don’t do.';
+  if (new Set(password).size < 5 || (plain.length > 0 && rest.length < 4))
+    return 'That password is too easy to guess; words of the house alone don’t do.';
   return null;
 }
 

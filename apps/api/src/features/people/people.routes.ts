@@ -38,11 +38,18 @@ async function me(req: Request, { db, person }: Context): Promise<Answer> {
   const own = await db.getRepository(Person).findOneByOrFail({ id: person.id });
   const [house] = await db.query<HouseInBrief[]>(
     `SELECT name, town, is_demo AS "isDemo", zone, step, base_currency AS "baseCurrency", price_currency AS "priceCurrency",
-       house_today()::text AS today, (SELECT count(*)::int FROM difference WHERE answer IS NULL) AS "differencesOpen" FROM house`);
+       house_today()::text AS today, (SELECT count(*)::int FROM difference WHERE answer IS NULL) AS "differencesOpen" FROM house`,
+  );
   const isOutside = own.roles.every((role) => role === 'retailer');
-  const body: Me = { id: own.id, name: own.name, roles: own.roles, seesCost: person.seesCost,
-    mustChangePassword: own.mustChangePassword, csrf: req.session.csrf ?? '',
-    house: { ...(house as HouseInBrief), ...(isOutside && { differencesOpen: 0 }) } };
+  const body: Me = {
+    id: own.id,
+    name: own.name,
+    roles: own.roles,
+    seesCost: person.seesCost,
+    mustChangePassword: own.mustChangePassword,
+    csrf: req.session.csrf ?? '',
+    house: { ...(house as HouseInBrief), ...(isOutside && { differencesOpen: 0 }) },
+  };
   return { body };
 }
 

@@ -8,7 +8,8 @@ export class Person {
   @Column({ type: 'text' }) email!: string;
   @Column({ type: 'text' }) name!: string;
   @Column({ type: 'text', name: 'password_hash', nullable: true }) passwordHash!: string | null;
-  @Column({ type: 'boolean', name: 'must_change_password', default: false }) mustChangePassword!: boolean;
+  @Column({ type: 'boolean', name: 'must_change_password', default: false })
+  mustChangePassword!: boolean;
   @Column({ type: 'text', array: true }) roles!: Role[];
   @Column({ type: 'boolean', name: 'sees_cost', default: false }) seesCost!: boolean;
   @Column({ type: 'bigint', name: 'party_id', nullable: true }) partyId!: string | null;
@@ -19,5 +20,7 @@ export class Person {
 
 /** Cost is for the owner, the buyer, the bookkeeper, and whom the owner lets see it. */
 export function maySeeCost(person: Pick<Person, 'roles' | 'seesCost'>): boolean {
-  return person.seesCost || person.roles.some((role) => ['owner', 'buyer', 'bookkeeper'].includes(role));
+  return (
+    person.seesCost || person.roles.some((role) => ['owner', 'buyer', 'bookkeeper'].includes(role))
+  );
 }

@@ -17,18 +17,28 @@ export async function signIn(req: Request, { db }: Context): Promise<Answer> {
   const { email, password } = await readBody(req, SignInRequest);
   const [account, address] = [`account ${email.toLowerCase()}`, `address ${req.ip}`];
   await refuseWhileWaiting(db, [account, address]);
-  const person = await db.getRepository(Person).createQueryBuilder('p').where('lower(p.email) = lower(:email)', { email }).getOne();
+  const person = await db
+    .getRepository(Person)
+    .createQueryBuilder('p')
+    .where('lower(p.email) = lower(:email)', { email })
+    .getOne();
   const isRight = await isRightPassword(password, person?.passwordHash ?? null);
   if (!isRight || !person || person.disabledAt) {
     const left = await countFailure(db, account, 'account');
     await countFailure(db, address, 'address');
-    const tries = left === 0 ? 'This name waits 10 minutes.' : `${left} ${left === 1 ? 'try' : 'tries'} left, then this name waits 10 minutes.`;
+    const tries =
+      left === 0
+        ? 'This name waits 10 minutes.'
+        : `${left} ${left === 1 ? 'try' : 'tries'} left, then this name waits 10 minutes.`;
     throw new Refusal(401, 'sign_in_refused', `E-mail or password is wrong. ${tries}`);
   }
   await forgetFailures(db, account);
   await beginSession(req, person.id);
-  await db.query(`DELETE FROM session WHERE sess ->> 'personId' = $1 AND sid NOT IN (
-    SELECT sid FROM session WHERE sess ->> 'personId' = $1 ORDER BY expire DESC LIMIT ${MOST_SESSIONS})`, [person.id]);
+  await db.query(
+    `DELETE FROM session WHERE sess ->> 'personId' = $1 AND sid NOT IN (
+    SELECT sid FROM session WHERE sess ->> 'personId' = $1 ORDER BY expire DESC LIMIT ${MOST_SESSIONS})`,
+    [person.id],
+  );
   await db.query('UPDATE person SET last_here_at = clock_timestamp() WHERE id = $1', [person.id]);
   await db.query(`INSERT INTO audit (person_id, action) VALUES ($1, 'sign in')`, [person.id]);
   return { status: 204 };
@@ -45,10 +55,15 @@ export async function changePassword(req: Request, { db, person }: Context): Pro
     throw new Refusal(409, 'password_wrong', 'Your password now is not the one you typed.');
   }
   const hash = await hashPassword(password, [own.name, own.email]);
-  await db.query('UPDATE person SET password_hash = $2, must_change_password = false WHERE id = $1', [person.id, hash]);
+  await db.query(
+    'UPDATE person SET password_hash = $2, must_change_password = false WHERE id = $1',
+    [person.id, hash],
+  );
   await endSessionsOf(db, person.id);
   await beginSession(req, person.id);
-  await db.query(`INSERT INTO audit (person_id, action) VALUES ($1, 'password changed')`, [person.id]);
+  await db.query(`INSERT INTO audit (person_id, action) VALUES ($1, 'password changed')`, [
+    person.id,
+  ]);
   return { status: 204 };
 }
 

@@ -8,7 +8,9 @@ const MOST_HITS = 8;
 
 /** The field in the band: a lot, memo, customer or report by number, scan or name; late and differing first. */
 async function pickUp(req: Request, { db }: Context): Promise<Answer> {
-  const typed = String(req.query.q ?? '').trim().slice(0, 80);
+  const typed = String(req.query.q ?? '')
+    .trim()
+    .slice(0, 80);
   if (typed === '') return { body: { hits: [], opens: null } satisfies PickUpAnswer };
   const mark = readMark(typed);
   const like = `${typed.replace(/[%_\\]/g, '\\$&')}%`;
@@ -31,10 +33,16 @@ async function pickUp(req: Request, { db }: Context): Promise<Answer> {
        (SELECT 'customer', y.number::text, y.name, '/customers/' || y.number, 'plain', y.number::text = $2
         FROM party y WHERE (y.number::text = $2 AND $2 <> '' OR y.name ILIKE '%' || $1)${wants('customer')} LIMIT ${MOST_HITS})) x
      ORDER BY exact AND kind = $4 DESC, exact DESC, tone = 'plain' LIMIT ${MOST_HITS}`,
-    [like, number, typed, mark?.kind ?? 'lot']);
+    [like, number, typed, mark?.kind ?? 'lot'],
+  );
   const exact = hits.filter((hit) => hit.exact && (mark === null || hit.kind === mark.kind));
-  const answer: PickUpAnswer = { hits: hits.map(({ exact: _exact, ...hit }) => hit), opens: exact.length === 1 ? (exact[0]?.path ?? null) : null };
+  const answer: PickUpAnswer = {
+    hits: hits.map(({ exact: _exact, ...hit }) => hit),
+    opens: exact.length === 1 ? (exact[0]?.path ?? null) : null,
+  };
   return { body: answer };
 }
 
-export const pickUpRoutes: Route[] = [{ method: 'get', path: '/pick-up', allowed: STAFF, handle: pickUp }];
+export const pickUpRoutes: Route[] = [
+  { method: 'get', path: '/pick-up', allowed: STAFF, handle: pickUp },
+];

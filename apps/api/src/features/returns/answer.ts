@@ -1,5 +1,16 @@
 import { AnswerRequest } from '@foldwell/contracts';
-import { acceptDifference, acceptOtherWeight, foundAgain, type Held, keepsItToo, type Legs, type Line, ourShortWeighing, recordCorrected, writeOffMissing } from '@foldwell/ledger';
+import {
+  acceptDifference,
+  acceptOtherWeight,
+  foundAgain,
+  type Held,
+  keepsItToo,
+  type Legs,
+  type Line,
+  ourShortWeighing,
+  recordCorrected,
+  writeOffMissing,
+} from '@foldwell/ledger';
 import { halfAwayFromZero } from '@foldwell/quantities';
 import type { Request } from 'express';
 
@@ -10,19 +21,43 @@ import type { Act } from '../ledger/act.js';
 import { type Key, keyOf, postAct } from '../ledger/post-act.js';
 
 interface Difference {
-  id: string; lot_id: string; memo_line_id: string | null; memo_id: string | null; kind: string; expected_weight: string; found_weight: string;
-  held_weight: string; held_pieces: string; came_lot_id: string | null; price: string | null; agreed_sum: string | null; priced_weight: string | null; sent_weight: string | null;
-  party_id: string | null; part_place: string | null; part_line: string | null; origin: string; treatment: string;
+  id: string;
+  lot_id: string;
+  memo_line_id: string | null;
+  memo_id: string | null;
+  kind: string;
+  expected_weight: string;
+  found_weight: string;
+  held_weight: string;
+  held_pieces: string;
+  came_lot_id: string | null;
+  price: string | null;
+  agreed_sum: string | null;
+  priced_weight: string | null;
+  sent_weight: string | null;
+  party_id: string | null;
+  part_place: string | null;
+  part_line: string | null;
+  origin: string;
+  treatment: string;
 }
 
 /** Closes a difference by somebody else than who weighed; each answer posts through the ledger. */
 export async function answer(req: Request, ctx: Context): Promise<Answer> {
   const request = await readBody(req, AnswerRequest);
-  return { status: 201, body: await answerDifference(ctx, keyOf(req, ctx), String(req.params.id), request) };
+  return {
+    status: 201,
+    body: await answerDifference(ctx, keyOf(req, ctx), String(req.params.id), request),
+  };
 }
 
 /** The act itself, as people and the demo house do it. */
-export async function answerDifference(ctx: Context, key: Key, id: string, { answer: word, reason, businessDate }: AnswerRequest): Promise<{ movementId: string | null }> {
+export async function answerDifference(
+  ctx: Context,
+  key: Key,
+  id: string,
+  { answer: word, reason, businessDate }: AnswerRequest,
+): Promise<{ movementId: string | null }> {
   const [difference] = await ctx.db.query<Difference[]>(
     `SELECT d.*, n.memo_id, n.price, n.agreed_sum, n.priced_weight, n.sent_weight, m.party_id, l.origin, l.treatment,
        part.place_id AS part_place, part.line_id AS part_line
@@ -32,12 +67,20 @@ export async function answerDifference(ctx: Context, key: Key, id: string, { ans
        LEFT JOIN memo_line x ON p.kind = 'memo' AND x.memo_id = p.memo_id AND x.lot_id = b.lot_id
        WHERE b.lot_id = d.lot_id AND b.inside AND b.weight > 0 AND p.kind <> 'missing'
        ORDER BY array_position(ARRAY['return desk', 'drawer', 'show', 'quarantine', 'person', 'memo'], p.kind) NULLS LAST LIMIT 1) part ON true
-     WHERE d.id::text = $1`, [id]);
+     WHERE d.id::text = $1`,
+    [id],
+  );
   if (!difference) throw new NotFound('There is no such difference.');
-  if (NEEDS_REASON.includes(word) && !reason?.trim()) throw new RuleBroken('movement_reason_where_due', `“${word}” needs a reason.`);
+  if (NEEDS_REASON.includes(word) && !reason?.trim())
+    throw new RuleBroken('movement_reason_where_due', `“${word}” needs a reason.`);
   const act = actOf(difference, word);
-  const written = await postAct(ctx, key, { ...act, businessDate, reason, ...(difference.memo_id && { memoId: Number(difference.memo_id) }),
-    answers: [{ differenceId: Number(difference.id), answer: word, reason }] });
+  const written = await postAct(ctx, key, {
+    ...act,
+    businessDate,
+    reason,
+    ...(difference.memo_id && { memoId: Number(difference.memo_id) }),
+    answers: [{ differenceId: Number(difference.id), answer: word, reason }],
+  });
   return { movementId: written.movementId === null ? null : String(written.movementId) };
 }
 
@@ -49,19 +92,29 @@ function actOf(difference: Difference, word: AnswerRequest['answer']): Act {
   const held = heldBy(difference);
   const kind = 'difference answered';
   const isShort = SHORT.includes(difference.kind);
-  if (isShort && word === 'customer keeps it' && held.line) return { kind, ...keepsItToo(held, held.line), keeps: [keepOf(difference, held)] };
+  if (isShort && word === 'customer keeps it' && held.line)
+    return { kind, ...keepsItToo(held, held.line), keeps: [keepOf(difference, held)] };
   if (isShort && word === 'accepted') return { kind, ...acceptedLegs(difference, held) };
-  if (isShort && word === 'found again') return { kind, ...foundAgain(held, { kind: 'return desk' }) };
-  if (isShort && word === 'record corrected') return { kind, ...recordCorrected(held, { kind: 'return desk' }) };
+  if (isShort && word === 'found again')
+    return { kind, ...foundAgain(held, { kind: 'return desk' }) };
+  if (isShort && word === 'record corrected')
+    return { kind, ...recordCorrected(held, { kind: 'return desk' }) };
   if (isShort && word === 'written off') return { kind, ...writeOffMissing(held) };
   const change = Number(difference.found_weight) - Number(difference.expected_weight);
   const lot = { id: Number(difference.lot_id) };
-  if (difference.kind === 'excess' && word === 'our short weighing') return { kind, ...ourShortWeighing(lot, { weight: change, pieces: 0 }) };
-  if (difference.kind === 'excess' && word === 'their short weighing') return theirExcess(difference, change);
-  if (difference.kind === 'other weight' && word === 'accepted') return { kind, ...acceptOtherWeight(lot, { kind: 'quarantine' }, change) };
+  if (difference.kind === 'excess' && word === 'our short weighing')
+    return { kind, ...ourShortWeighing(lot, { weight: change, pieces: 0 }) };
+  if (difference.kind === 'excess' && word === 'their short weighing')
+    return theirExcess(difference, change);
+  if (difference.kind === 'other weight' && word === 'accepted')
+    return { kind, ...acceptOtherWeight(lot, { kind: 'quarantine' }, change) };
   if (difference.kind === 'other weight' && word === 'found again') return { kind: null };
-  if (difference.kind === 'suspected switch' && ['other stone', 'found again'].includes(word)) return { kind: null };
-  throw new RuleBroken('answer_fits', `“${word}” is not an answer to ${difference.kind === 'excess' ? 'an excess' : `“${difference.kind}”`}.`);
+  if (difference.kind === 'suspected switch' && ['other stone', 'found again'].includes(word))
+    return { kind: null };
+  throw new RuleBroken(
+    'answer_fits',
+    `“${word}” is not an answer to ${difference.kind === 'excess' ? 'an excess' : `“${difference.kind}”`}.`,
+  );
 }
 
 /** The cost goes back to the rest of the lot, also where that lies on a memo. */
@@ -72,8 +125,16 @@ function acceptedLegs({ part_place: place, part_line: line }: Difference, held: 
 
 function heldBy(difference: Difference): Held {
   const lot = { id: Number(difference.lot_id) };
-  const line: Line | undefined = difference.memo_line_id ? { lot, memoId: Number(difference.memo_id), lineId: Number(difference.memo_line_id) } : undefined;
-  return { lot, difference: { id: Number(difference.id) }, weight: Number(difference.held_weight), pieces: Number(difference.held_pieces), line };
+  const line: Line | undefined = difference.memo_line_id
+    ? { lot, memoId: Number(difference.memo_id), lineId: Number(difference.memo_line_id) }
+    : undefined;
+  return {
+    lot,
+    difference: { id: Number(difference.id) },
+    weight: Number(difference.held_weight),
+    pieces: Number(difference.held_pieces),
+    line,
+  };
 }
 
 /** An excess that is theirs: a lot of that party's, without cost, in quarantine. */
@@ -83,16 +144,42 @@ function theirExcess(difference: Difference, weight: number): Act {
     { lot: theirs, place: { new: 'in' }, weight: -weight, pieces: -1, cost: { how: 'none' } },
     { lot: theirs, place: { kind: 'quarantine' }, weight, pieces: 1, cost: { how: 'none' } },
   ];
-  return { kind: 'consignment in', partyId: difference.party_id ?? undefined, legs, pools: [],
-    newPlaces: [{ ref: 'in', kind: 'memo in', name: 'Came over', partyId: difference.party_id ?? '' }],
-    newLots: [{ ref: 'theirs', kind: 'parcel', is_estimated: true, origin: difference.origin, treatment: difference.treatment, owner_party_id: difference.party_id, source_party_id: difference.party_id }] };
+  return {
+    kind: 'consignment in',
+    partyId: difference.party_id ?? undefined,
+    legs,
+    pools: [],
+    newPlaces: [
+      { ref: 'in', kind: 'memo in', name: 'Came over', partyId: difference.party_id ?? '' },
+    ],
+    newLots: [
+      {
+        ref: 'theirs',
+        kind: 'parcel',
+        is_estimated: true,
+        origin: difference.origin,
+        treatment: difference.treatment,
+        owner_party_id: difference.party_id,
+        source_party_id: difference.party_id,
+      },
+    ],
+  };
 }
 
 function keepOf(difference: Difference, held: Held): NonNullable<Act['keeps']>[number] {
   const [w, sent] = [BigInt(held.weight), BigInt(difference.sent_weight ?? 1)];
-  const amount = difference.agreed_sum === null
-    ? halfAwayFromZero(BigInt(difference.price ?? 0) * BigInt(difference.priced_weight ?? 0) * w, sent * 1000n)
-    : halfAwayFromZero(BigInt(difference.agreed_sum) * w, sent);
-  return { lineId: Number(difference.memo_line_id), weight: held.weight, pieces: held.pieces, price: difference.price === null ? null : Number(difference.price), amount: Number(amount) };
+  const amount =
+    difference.agreed_sum === null
+      ? halfAwayFromZero(
+          BigInt(difference.price ?? 0) * BigInt(difference.priced_weight ?? 0) * w,
+          sent * 1000n,
+        )
+      : halfAwayFromZero(BigInt(difference.agreed_sum) * w, sent);
+  return {
+    lineId: Number(difference.memo_line_id),
+    weight: held.weight,
+    pieces: held.pieces,
+    price: difference.price === null ? null : Number(difference.price),
+    amount: Number(amount),
+  };
 }
-

@@ -2,7 +2,11 @@ import type { DifferenceRow } from '@foldwell/contracts';
 import type { DataSource } from 'typeorm';
 
 /** Differences that fit a condition on `d` (and `n`, its memo line), the open ones with who else may answer. */
-export async function differenceRows(db: DataSource, condition: string, values: unknown[]): Promise<DifferenceRow[]> {
+export async function differenceRows(
+  db: DataSource,
+  condition: string,
+  values: unknown[],
+): Promise<DifferenceRow[]> {
   return db.query<DifferenceRow[]>(
     `SELECT d.id, l.number AS lot, concat_ws(' ', initcap(l.kind), lower(l.shape)) AS what, m.number::text AS memo, y.name AS party, d.kind,
        d.expected_weight::float8 AS expected, d.found_weight::float8 AS found, d.expected_pieces::int AS "expectedPieces", d.found_pieces::int AS "foundPieces",
@@ -15,5 +19,7 @@ export async function differenceRows(db: DataSource, condition: string, values: 
        coalesce(m.currency, h.price_currency) AS currency, (SELECT number FROM lot WHERE id = d.came_lot_id) AS "cameLot"
      FROM difference d JOIN lot l ON l.id = d.lot_id JOIN person w ON w.id = d.opened_by CROSS JOIN house h
      LEFT JOIN memo_line n ON n.id = d.memo_line_id LEFT JOIN memo m ON m.id = n.memo_id LEFT JOIN party y ON y.id = m.party_id
-     WHERE ${condition} ORDER BY d.answer IS NOT NULL, d.id`, values);
+     WHERE ${condition} ORDER BY d.answer IS NOT NULL, d.id`,
+    values,
+  );
 }

@@ -27,12 +27,18 @@ export function judgeReading(line: Expected, reading: WeighBackRequest): Judged 
 }
 
 /** A stone agrees by number and weight; where one disagrees the person says whose it is. */
-function judgeStone(line: Expected, { weight, pieces, reportRead, decision }: WeighBackRequest): Judged {
-  const isOtherNumber = Boolean(reportRead && line.report) && !line.report.toUpperCase().endsWith((reportRead ?? '').trim().toUpperCase());
+function judgeStone(
+  line: Expected,
+  { weight, pieces, reportRead, decision }: WeighBackRequest,
+): Judged {
+  const isOtherNumber =
+    Boolean(reportRead && line.report) &&
+    !line.report.toUpperCase().endsWith((reportRead ?? '').trim().toUpperCase());
   const isOtherWeight = !stoneAgrees(line.out, weight, line.stoneTolerance);
   const isShort = pieces !== undefined && pieces < line.outPieces;
   if (decision === 'not ours') return { outcome: 'suspected switch', pieces: 0 };
-  if (decision === 'ours') return { outcome: isOtherWeight ? 'other weight' : 'agrees', pieces: line.outPieces };
+  if (decision === 'ours')
+    return { outcome: isOtherWeight ? 'other weight' : 'agrees', pieces: line.outPieces };
   if (isOtherNumber || isOtherWeight || isShort) return { outcome: 'asks', pieces: line.outPieces };
   return { outcome: 'agrees', pieces: line.outPieces };
 }
@@ -40,10 +46,18 @@ function judgeStone(line: Expected, { weight, pieces, reportRead, decision }: We
 /** A parcel within tolerance is restated; outside it is short or over; counted pieces have no tolerance. */
 function judgeParcel(line: Expected, { weight, pieces: counted }: WeighBackRequest): Judged {
   const off = weight - line.out;
-  const isInside = parcelAgrees({ expected: line.out, restatedBefore: line.restated }, weight, line.parcelTolerance);
-  const follow = Math.min(line.outPieces, Math.max(0, Math.round((line.outPieces * weight) / Math.max(1, line.out))));
+  const isInside = parcelAgrees(
+    { expected: line.out, restatedBefore: line.restated },
+    weight,
+    line.parcelTolerance,
+  );
+  const follow = Math.min(
+    line.outPieces,
+    Math.max(0, Math.round((line.outPieces * weight) / Math.max(1, line.out))),
+  );
   const pieces = counted ?? (line.isEstimated && !isInside && off < 0 ? follow : line.outPieces);
-  if (!line.isEstimated && pieces < line.outPieces) return { outcome: isInside && off >= 0 ? 'pieces short' : 'short', pieces };
+  if (!line.isEstimated && pieces < line.outPieces)
+    return { outcome: isInside && off >= 0 ? 'pieces short' : 'short', pieces };
   if (weight === 0) return { outcome: 'not found', pieces: 0 };
   if (isInside) return { outcome: off === 0 ? 'agrees' : 'restated', pieces: line.outPieces };
   return { outcome: off < 0 ? 'short' : 'excess', pieces };

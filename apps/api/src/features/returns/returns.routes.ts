@@ -14,5 +14,10 @@ export const returnRoutes: Route[] = [
   { method: 'get', path: '/differences', allowed: STAFF, handle: listDifferences },
   { method: 'post', path: '/differences/:id/weigh-again', allowed: RECEIVERS, handle: weighAgain },
   { method: 'post', path: '/differences/:id/ask', allowed: RECEIVERS, handle: askCustomer },
-  { method: 'post', path: '/differences/:id/answer', allowed: ['owner', 'bookkeeper'], handle: answer },
+  {
+    method: 'post',
+    path: '/differences/:id/answer',
+    allowed: ['owner', 'bookkeeper'],
+    handle: answer,
+  },
 ];

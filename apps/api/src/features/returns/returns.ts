@@ -17,13 +17,15 @@ export async function listReturns(_req: Request, { db }: Context): Promise<Answe
      FROM memo m JOIN party y ON y.id = m.party_id JOIN memo_line n ON n.memo_id = m.id
      LEFT JOIN difference d ON d.memo_line_id = n.id AND d.answer IS NULL
      WHERE NOT m.is_settled OR EXISTS (SELECT 1 FROM difference e JOIN memo_line x ON x.id = e.memo_line_id WHERE x.memo_id = m.id AND e.answer IS NULL)
-     GROUP BY m.id, y.name ORDER BY count(d.id) DESC, m.due LIMIT 200`);
+     GROUP BY m.id, y.name ORDER BY count(d.id) DESC, m.due LIMIT 200`,
+  );
   const desk = await db.query<ReturnsList['desk']>(
     `SELECT l.number AS lot, concat_ws(' ', initcap(l.kind), lower(l.shape)) AS what, m.number::text AS memo, b.pieces::int AS pieces, b.weight::float8 AS weight,
        b.place_id AS "placeId", p.name AS place, b.last_date::text AS since
      FROM balance b JOIN place p ON p.id = b.place_id JOIN lot l ON l.id = b.lot_id
      LEFT JOIN movement v ON v.id = b.last_movement_id LEFT JOIN memo m ON m.id = v.memo_id
-     WHERE p.kind IN ('return desk', 'quarantine') AND b.weight > 0 ORDER BY p.kind DESC, b.last_movement_id, l.id LIMIT 500`);
+     WHERE p.kind IN ('return desk', 'quarantine') AND b.weight > 0 ORDER BY p.kind DESC, b.last_movement_id, l.id LIMIT 500`,
+  );
   return { body: { memos, desk } satisfies ReturnsList };
 }
 
@@ -37,11 +39,35 @@ export async function putAway(req: Request, ctx: Context): Promise<Answer> {
 /** Closes a return with its slip: what came back, what was found, what is still open. */
 export async function closeReturn(req: Request, ctx: Context): Promise<Answer> {
   const memo = await findMemo(ctx, String(req.params.number));
-  const differences = await differenceRows(ctx.db, 'n.memo_id = $1 AND d.answer IS NULL', [memo.id]);
-  const written = await postAct(ctx, keyOf(req, ctx), { kind: null, memoId: memo.id, audit: { action: 'return slip' },
-    document: { kind: 'return slip', snapshot: { memo: `M ${memo.number}`, by: ctx.person.name,
-      lines: memo.lines.map(({ lot, what, flows, found, weighing }) => ({ lot, what, ...flows, found, weighing })),
-      differences: differences.map(({ lot, kind, expected, found, held }) => ({ lot, kind, expected, found, held })) } } });
+  const differences = await differenceRows(ctx.db, 'n.memo_id = $1 AND d.answer IS NULL', [
+    memo.id,
+  ]);
+  const written = await postAct(ctx, keyOf(req, ctx), {
+    kind: null,
+    memoId: memo.id,
+    audit: { action: 'return slip' },
+    document: {
+      kind: 'return slip',
+      snapshot: {
+        memo: `M ${memo.number}`,
+        by: ctx.person.name,
+        lines: memo.lines.map(({ lot, what, flows, found, weighing }) => ({
+          lot,
+          what,
+          ...flows,
+          found,
+          weighing,
+        })),
+        differences: differences.map(({ lot, kind, expected, found, held }) => ({
+          lot,
+          kind,
+          expected,
+          found,
+          held,
+        })),
+      },
+    },
+  });
   return { status: 201, body: { number: written.document?.number } };
 }
 
@@ -53,10 +79,14 @@ export async function listDifferences(_req: Request, { db }: Context): Promise<A
 export async function askCustomer(req: Request, { db, person }: Context): Promise<Answer> {
   const id = String(req.params.id);
   const [rows] = await db.query<[{ memo_line_id: string | null; lot_id: string }[], number]>(
-    'UPDATE difference SET asked_at = clock_timestamp() WHERE id::text = $1 AND answer IS NULL RETURNING memo_line_id, lot_id', [id]);
+    'UPDATE difference SET asked_at = clock_timestamp() WHERE id::text = $1 AND answer IS NULL RETURNING memo_line_id, lot_id',
+    [id],
+  );
   if (!rows[0]) throw new NotFound('That difference is not open.');
   await db.query(
     `INSERT INTO memo_word (memo_id, person_id, words) SELECT n.memo_id, $2, 'Asked about the difference of ' || l.number
-     FROM memo_line n JOIN lot l ON l.id = n.lot_id WHERE n.id = $1`, [rows[0].memo_line_id, person.id]);
+     FROM memo_line n JOIN lot l ON l.id = n.lot_id WHERE n.id = $1`,
+    [rows[0].memo_line_id, person.id],
+  );
   return { status: 201 };
 }

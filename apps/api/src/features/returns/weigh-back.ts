@@ -21,44 +21,124 @@ export async function weighBack(req: Request, ctx: Context): Promise<Answer> {
 type FoundLine = Awaited<ReturnType<typeof findMemo>>['lines'][number];
 
 /** The act itself, as people and the demo house do it. */
-export async function weighBackLine(ctx: Context, key: Key, number: string, request: WeighBackRequest): Promise<WeighedBack> {
+export async function weighBackLine(
+  ctx: Context,
+  key: Key,
+  number: string,
+  request: WeighBackRequest,
+): Promise<WeighedBack> {
   const memo = await findMemo(ctx, number);
   const line = lineOf(memo, request.lot);
-  if (line.flows.out === 0) throw new RuleBroken('line_closed', `${line.lot} is settled on M ${memo.number}; nothing of it is still out.`);
+  if (line.flows.out === 0)
+    throw new RuleBroken(
+      'line_closed',
+      `${line.lot} is settled on M ${memo.number}; nothing of it is still out.`,
+    );
   const rules = await rulesOf(ctx, memo.id);
-  if (request.weight % rules.step !== 0) throw new ValidationFailed([{ field: 'weight', message: 'Three decimals; this house’s balance reads to 0.01 ct.' }]);
-  const expected: Expected = { ...rules, kind: line.lotKind, isEstimated: line.isEstimated, report: line.report, out: line.flows.out,
-    outPieces: line.outPieces, restated: line.flows.restated };
+  if (request.weight % rules.step !== 0)
+    throw new ValidationFailed([
+      { field: 'weight', message: 'Three decimals; this house’s balance reads to 0.01 ct.' },
+    ]);
+  const expected: Expected = {
+    ...rules,
+    kind: line.lotKind,
+    isEstimated: line.isEstimated,
+    report: line.report,
+    out: line.flows.out,
+    outPieces: line.outPieces,
+    restated: line.flows.restated,
+  };
   const judged = judgeReading(expected, request);
   if (judged.outcome === 'asks') return { weighing: 0, outcome: 'asks', says: asks(line, request) };
-  const written = await postAct(ctx, key, { memoId: memo.id, businessDate: request.businessDate, ...(await actOf(ctx, memo.id, line, request, judged)) });
-  return { weighing: written.weighings[0] ?? 0, outcome: judged.outcome, says: says(line, request, judged) };
+  const written = await postAct(ctx, key, {
+    memoId: memo.id,
+    businessDate: request.businessDate,
+    ...(await actOf(ctx, memo.id, line, request, judged)),
+  });
+  return {
+    weighing: written.weighings[0] ?? 0,
+    outcome: judged.outcome,
+    says: says(line, request, judged),
+  };
 }
 
 /** The act that an outcome posts. */
-async function actOf(ctx: Context, memoId: number, line: FoundLine, request: WeighBackRequest, judged: Judged): Promise<Act> {
+async function actOf(
+  ctx: Context,
+  memoId: number,
+  line: FoundLine,
+  request: WeighBackRequest,
+  judged: Judged,
+): Promise<Act> {
   const { lot } = line.line;
   const out = { weight: line.flows.out, pieces: line.outPieces };
   const desk = { kind: 'return desk' } as const;
-  const reading = (ref?: string): Act['weighings'] => [{ lot, purpose: 'return', weight: request.weight, pieces: request.pieces ?? judged.pieces,
-    reportRead: request.reportRead, lineId: line.line.lineId, ...(ref && { difference: { new: ref } }) }];
-  const difference = (kind: NewDifference['kind'], more: Partial<NewDifference> = {}): NewDifference[] => [{ ref: 'd', lot, lineId: line.line.lineId, kind,
-    expectedWeight: out.weight, foundWeight: request.weight, expectedPieces: out.pieces, foundPieces: judged.pieces, ...more }];
+  const reading = (ref?: string): Act['weighings'] => [
+    {
+      lot,
+      purpose: 'return',
+      weight: request.weight,
+      pieces: request.pieces ?? judged.pieces,
+      reportRead: request.reportRead,
+      lineId: line.line.lineId,
+      ...(ref && { difference: { new: ref } }),
+    },
+  ];
+  const difference = (
+    kind: NewDifference['kind'],
+    more: Partial<NewDifference> = {},
+  ): NewDifference[] => [
+    {
+      ref: 'd',
+      lot,
+      lineId: line.line.lineId,
+      kind,
+      expectedWeight: out.weight,
+      foundWeight: request.weight,
+      expectedPieces: out.pieces,
+      foundPieces: judged.pieces,
+      ...more,
+    },
+  ];
   switch (judged.outcome) {
     case 'agrees':
       return { kind: 'memo return', ...bringBack(line.line, desk, out), weighings: reading() };
     case 'restated':
-      return { kind: 'memo return', ...bringBackRestated(line.line, desk, out, { weight: request.weight, pieces: out.pieces }), weighings: reading() };
+      return {
+        kind: 'memo return',
+        ...bringBackRestated(line.line, desk, out, { weight: request.weight, pieces: out.pieces }),
+        weighings: reading(),
+      };
     case 'excess':
       // What was expected is back; what is over lies in quarantine, unposted, until somebody answers.
-      return { kind: 'memo return', ...bringBack(line.line, desk, out), newDifferences: difference('excess'), weighings: reading('d') };
+      return {
+        kind: 'memo return',
+        ...bringBack(line.line, desk, out),
+        newDifferences: difference('excess'),
+        weighings: reading('d'),
+      };
     case 'short':
     case 'pieces short':
-      return { kind: 'memo return', ...shortLegs(line, request, judged), newDifferences: difference(judged.outcome), weighings: reading('d') };
+      return {
+        kind: 'memo return',
+        ...shortLegs(line, request, judged),
+        newDifferences: difference(judged.outcome),
+        weighings: reading('d'),
+      };
     case 'not found':
-      return { kind: 'difference opened', ...miss(line.line, { new: 'd' }, out), newDifferences: difference('not found'), weighings: reading('d') };
+      return {
+        kind: 'difference opened',
+        ...miss(line.line, { new: 'd' }, out),
+        newDifferences: difference('not found'),
+        weighings: reading('d'),
+      };
     case 'other weight':
-      return { kind: 'memo return', ...bringBack(line.line, { kind: 'quarantine' }, out), newDifferences: difference('other weight'), weighings: reading('d') };
+      return {
+        kind: 'memo return',
+        ...bringBack(line.line, { kind: 'quarantine' }, out),
+        newDifferences: difference('other weight'),
+        weighings: reading('d'),
+      };
     default:
       return switchAct(ctx, memoId, line, request, difference);
   }
@@ -68,25 +148,69 @@ function shortLegs(line: FoundLine, request: WeighBackRequest, judged: Judged): 
   const [out, outPieces] = [line.flows.out, line.outPieces];
   const back = { weight: Math.min(request.weight, out), pieces: judged.pieces };
   const gone = { weight: out - back.weight, pieces: outPieces - back.pieces };
-  return together(...(back.weight > 0 ? [bringBack(line.line, { kind: 'return desk' }, back)] : []), miss(line.line, { new: 'd' }, gone));
+  return together(
+    ...(back.weight > 0 ? [bringBack(line.line, { kind: 'return desk' }, back)] : []),
+    miss(line.line, { new: 'd' }, gone),
+  );
 }
 
 /** Ours stays on the memo; what came is a new lot of that party's, without cost, in quarantine. */
-async function switchAct({ db }: Context, memoId: number, line: FoundLine, request: WeighBackRequest, difference: (kind: string, more: Partial<NewDifference>) => NewDifference[]): Promise<Act> {
-  const [party] = await db.query<{ id: string; name: string }[]>('SELECT y.id, y.name FROM party y JOIN memo m ON m.party_id = y.id WHERE m.id = $1', [memoId]);
+async function switchAct(
+  { db }: Context,
+  memoId: number,
+  line: FoundLine,
+  request: WeighBackRequest,
+  difference: (kind: string, more: Partial<NewDifference>) => NewDifference[],
+): Promise<Act> {
+  const [party] = await db.query<{ id: string; name: string }[]>(
+    'SELECT y.id, y.name FROM party y JOIN memo m ON m.party_id = y.id WHERE m.id = $1',
+    [memoId],
+  );
   const came = { new: 'came' };
   const quantity = { weight: request.weight, pieces: 1 };
   return {
-    kind: 'consignment in', partyId: party?.id, paper: `came for ${line.lot}`,
-    newPlaces: [{ ref: 'theirs', kind: 'memo in', name: `Came for ${line.lot}`, partyId: party?.id ?? '' }],
-    newLots: [{ ref: 'came', kind: 'stone', fixed_pieces: 1, origin: 'not tested', owner_party_id: party?.id, source_party_id: party?.id,
-      particulars: { comments: `Came back for ${line.lot}; suspected, not proven.`, ...(request.reportRead && { inscription: request.reportRead }) } }],
+    kind: 'consignment in',
+    partyId: party?.id,
+    paper: `came for ${line.lot}`,
+    newPlaces: [
+      { ref: 'theirs', kind: 'memo in', name: `Came for ${line.lot}`, partyId: party?.id ?? '' },
+    ],
+    newLots: [
+      {
+        ref: 'came',
+        kind: 'stone',
+        fixed_pieces: 1,
+        origin: 'not tested',
+        owner_party_id: party?.id,
+        source_party_id: party?.id,
+        particulars: {
+          comments: `Came back for ${line.lot}; suspected, not proven.`,
+          ...(request.reportRead && { inscription: request.reportRead }),
+        },
+      },
+    ],
     legs: [
-      { lot: came, place: { new: 'theirs' }, weight: -quantity.weight, pieces: -1, cost: { how: 'none' } },
+      {
+        lot: came,
+        place: { new: 'theirs' },
+        weight: -quantity.weight,
+        pieces: -1,
+        cost: { how: 'none' },
+      },
       { lot: came, place: { kind: 'quarantine' }, ...quantity, cost: { how: 'none' } },
     ],
-    pools: [], newDifferences: difference('suspected switch', { cameLot: came, foundPieces: 1 }),
-    weighings: [{ lot: came, purpose: 'return', weight: request.weight, pieces: 1, reportRead: request.reportRead, difference: { new: 'd' } }],
+    pools: [],
+    newDifferences: difference('suspected switch', { cameLot: came, foundPieces: 1 }),
+    weighings: [
+      {
+        lot: came,
+        purpose: 'return',
+        weight: request.weight,
+        pieces: 1,
+        reportRead: request.reportRead,
+        difference: { new: 'd' },
+      },
+    ],
   };
 }
 
@@ -97,33 +221,59 @@ interface Rules {
 }
 
 async function rulesOf({ db }: Context, memoId: number): Promise<Rules> {
-  const [rules] = await db.query<Rules[]>('SELECT stone_tolerance AS "stoneTolerance", parcel_tolerance AS "parcelTolerance", step FROM memo WHERE id = $1', [memoId]);
+  const [rules] = await db.query<Rules[]>(
+    'SELECT stone_tolerance AS "stoneTolerance", parcel_tolerance AS "parcelTolerance", step FROM memo WHERE id = $1',
+    [memoId],
+  );
   return rules as Rules;
 }
 
 /** Weighed again while a difference is open: every reading is kept, the difference is answered by somebody else. */
 export async function weighAgain(req: Request, ctx: Context): Promise<Answer> {
   const { weight, pieces } = await readBody(req, WeighAgainRequest);
-  const [difference] = await ctx.db.query<{ lot_id: string; memo_line_id: string | null }[]>('SELECT lot_id, memo_line_id FROM difference WHERE id::text = $1 AND answer IS NULL', [String(req.params.id)]);
-  if (!difference) throw new RuleBroken('difference_still_open', 'That difference is answered already.');
-  const written = await postAct(ctx, keyOf(req, ctx), { kind: null, weighings: [{ lot: { id: Number(difference.lot_id) }, purpose: 'again', weight, pieces,
-    ...(difference.memo_line_id && { lineId: Number(difference.memo_line_id) }), difference: { id: Number(req.params.id) } }], audit: { action: 'weighed again' } });
+  const [difference] = await ctx.db.query<{ lot_id: string; memo_line_id: string | null }[]>(
+    'SELECT lot_id, memo_line_id FROM difference WHERE id::text = $1 AND answer IS NULL',
+    [String(req.params.id)],
+  );
+  if (!difference)
+    throw new RuleBroken('difference_still_open', 'That difference is answered already.');
+  const written = await postAct(ctx, keyOf(req, ctx), {
+    kind: null,
+    weighings: [
+      {
+        lot: { id: Number(difference.lot_id) },
+        purpose: 'again',
+        weight,
+        pieces,
+        ...(difference.memo_line_id && { lineId: Number(difference.memo_line_id) }),
+        difference: { id: Number(req.params.id) },
+      },
+    ],
+    audit: { action: 'weighed again' },
+  });
   return { status: 201, body: { weighing: written.weighings[0] } };
 }
 
 function asks(line: FoundLine, { weight, reportRead }: WeighBackRequest): string {
   const off = formatPoints(weight - line.flows.out);
-  const number = reportRead && !line.report.toUpperCase().endsWith(reportRead.trim().toUpperCase()) ? ` Its number reads ${reportRead}, ours is ${line.report}.` : '';
+  const number =
+    reportRead && !line.report.toUpperCase().endsWith(reportRead.trim().toUpperCase())
+      ? ` Its number reads ${reportRead}, ours is ${line.report}.`
+      : '';
   return `${line.lot} does not match: ${formatCarats(weight)} ct found, ${formatCarats(line.flows.out)} ct expected, ${off}.${number} Is it ours?`;
 }
 
 function says(line: FoundLine, { weight }: WeighBackRequest, { outcome }: Judged): string {
   const off = weight - line.flows.out;
   const words: Record<string, string> = {
-    agrees: 'agrees', restated: `inside tolerance, restated ${formatPoints(off)}`, short: `${formatPoints(-off).replace('+', '')} missing, in hand`,
-    excess: `${formatPoints(off)} over, in quarantine unposted`, 'pieces short': 'pieces missing, in hand', 'not found': 'not found, all of it missing',
-    'other weight': 'whole to quarantine', 'suspected switch': 'ours stays on the memo; what came lies in quarantine',
+    agrees: 'agrees',
+    restated: `inside tolerance, restated ${formatPoints(off)}`,
+    short: `${formatPoints(-off).replace('+', '')} missing, in hand`,
+    excess: `${formatPoints(off)} over, in quarantine unposted`,
+    'pieces short': 'pieces missing, in hand',
+    'not found': 'not found, all of it missing',
+    'other weight': 'whole to quarantine',
+    'suspected switch': 'ours stays on the memo; what came lies in quarantine',
   };
   return words[outcome] ?? outcome;
 }
-

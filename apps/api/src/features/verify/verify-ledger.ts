@@ -17,13 +17,24 @@ export async function verifyLedger(client: Client): Promise<Verdict> {
   const verdict: Verdict = { lines: [], failed: 0, ran: 0 };
   try {
     for (const [index, assertion] of ASSERTIONS.entries()) {
-      const sql = usesGuards(assertion) ? `WITH guards_now AS (${GUARDS_NOW}) ${assertion.offenders}` : assertion.offenders;
-      const { rows } = await client.query<string[]>({ text: sql, rowMode: 'array', ...(usesGuards(assertion) && { values: [guards] }) });
+      const sql = usesGuards(assertion)
+        ? `WITH guards_now AS (${GUARDS_NOW}) ${assertion.offenders}`
+        : assertion.offenders;
+      const { rows } = await client.query<string[]>({
+        text: sql,
+        rowMode: 'array',
+        ...(usesGuards(assertion) && { values: [guards] }),
+      });
       const number = index + 1;
-      const names = rows.slice(0, NAMED).map(([name]) => name).join('; ') + (rows.length > NAMED ? ' …' : '');
+      const names =
+        rows
+          .slice(0, NAMED)
+          .map(([name]) => name)
+          .join('; ') + (rows.length > NAMED ? ' …' : '');
       verdict.ran += 1;
       if (rows.length === 0) verdict.lines.push(`${number} ok ${assertion.says}`);
-      else if (assertion.isWarning) verdict.lines.push(`${number} ok ${assertion.says}, but see ${rows.length}: ${names}`);
+      else if (assertion.isWarning)
+        verdict.lines.push(`${number} ok ${assertion.says}, but see ${rows.length}: ${names}`);
       else {
         verdict.failed += 1;
         verdict.lines.push(`${number} FAIL ${rows.length} ${assertion.says}: ${names}`);

@@ -12,38 +12,107 @@ import { ParticularsFields } from './particulars-fields';
 import { type ParticularsForm, particularsForm, readParticulars } from './particulars-form';
 
 /** Edits what is written about a lot; a colleague's newer version is shown beside yours. */
-export function EditLot({ lot, onDone, onLeave }: { lot: LotDetail; onDone(): void; onLeave(): void }) {
-  const { house: { priceCurrency: currency } } = useMe();
+export function EditLot({
+  lot,
+  onDone,
+  onLeave,
+}: {
+  lot: LotDetail;
+  onDone(): void;
+  onLeave(): void;
+}) {
+  const {
+    house: { priceCurrency: currency },
+  } = useMe();
   const isOwner = useMay('owner');
-  const [form, change, forget] = useKept<ParticularsForm>(`edit ${lot.row.number}`, particularsForm(lot.particulars, currency));
+  const [form, change, forget] = useKept<ParticularsForm>(
+    `edit ${lot.row.number}`,
+    particularsForm(lot.particulars, currency),
+  );
   const [version, setVersion] = useState(lot.version);
   const [error, setError] = useState<unknown>();
   const [problems, setProblems] = useState<Record<string, string>>({});
-  const theirs = error instanceof Problem && error.body.status === 412 ? (error.body.current as { version: number; particulars: ParticularsRequest }) : null;
+  const theirs =
+    error instanceof Problem && error.body.status === 412
+      ? (error.body.current as { version: number; particulars: ParticularsRequest })
+      : null;
   const save = async () => {
     const read = readParticulars(form, currency);
     setProblems(read.problems);
     if (Object.keys(read.problems).length > 0) return;
     const { floor, ...request } = read.request;
     try {
-      await api(`/lots/${lot.row.number}`, { method: 'PATCH', version, body: isOwner && readMoney(form.floor || '0', currency).kind === 'ok' ? { ...request, floor } : request });
+      await api(`/lots/${lot.row.number}`, {
+        method: 'PATCH',
+        version,
+        body:
+          isOwner && readMoney(form.floor || '0', currency).kind === 'ok'
+            ? { ...request, floor }
+            : request,
+      });
       forget();
       onDone();
     } catch (problem) {
       setError(problem);
-      if (problem instanceof Problem && problem.body.status === 412) setVersion((problem.body.current as { version: number }).version);
+      if (problem instanceof Problem && problem.body.status === 412)
+        setVersion((problem.body.current as { version: number }).version);
     }
   };
-  useKeys([{ key: 'Ctrl Enter', says: 'keep', act: () => void save(), inFields: true }, { key: 'Esc', says: 'leave', act: onLeave }]);
+  useKeys([
+    { key: 'Ctrl Enter', says: 'keep', act: () => void save(), inFields: true },
+    { key: 'Esc', says: 'leave', act: onLeave },
+  ]);
   return (
-    <section className="bg-tissue px-6 py-4 grid gap-3 border-b border-crease-2" aria-label={`Edit ${lot.row.number}`}>
+    <section
+      className="bg-tissue px-6 py-4 grid gap-3 border-b border-crease-2"
+      aria-label={`Edit ${lot.row.number}`}
+    >
       <h2>Edit {lot.row.number}</h2>
-      <p className="small soft">Who, when, from and to are kept. Weights change only by weighing.</p>
+      <p className="small soft">
+        Who, when, from and to are kept. Weights change only by weighing.
+      </p>
       <ParticularsFields form={form} change={change} problems={problems} kind={lot.row.kind} />
-      {isOwner ? <Field label="Floor price" unit={`${currency}/ct`} isNumber value={form.floor} onValue={(floor) => change({ floor })} className="w-[160px]" /> : <p className="tiny quiet">Floor price, owner only.</p>}
-      {theirs && <div className="note warn"><h3 className="red">Changed meanwhile</h3><p>Theirs now: {Object.entries(particularsForm(theirs.particulars, currency)).filter(([name, value]) => value !== form[name as keyof ParticularsForm]).map(([name, value]) => `${name} ${value || 'empty'}`).join(', ') || 'the same as yours'}. Yours stands in the fields; keep again to write it over theirs.</p></div>}
+      {isOwner ? (
+        <Field
+          label="Floor price"
+          unit={`${currency}/ct`}
+          isNumber
+          value={form.floor}
+          onValue={(floor) => change({ floor })}
+          className="w-[160px]"
+        />
+      ) : (
+        <p className="tiny quiet">Floor price, owner only.</p>
+      )}
+      {theirs && (
+        <div className="note warn">
+          <h3 className="red">Changed meanwhile</h3>
+          <p>
+            Theirs now:{' '}
+            {Object.entries(particularsForm(theirs.particulars, currency))
+              .filter(([name, value]) => value !== form[name as keyof ParticularsForm])
+              .map(([name, value]) => `${name} ${value || 'empty'}`)
+              .join(', ') || 'the same as yours'}
+            . Yours stands in the fields; keep again to write it over theirs.
+          </p>
+        </div>
+      )}
       {!theirs && <Refused error={error} />}
-      <div className="flex gap-2"><button type="button" className="btn primary" onClick={() => void save()}>Keep changes <kbd>Ctrl Enter</kbd></button><button type="button" className="btn" onClick={() => { forget(); onLeave(); }}>Leave as it was</button></div>
+      <div className="flex gap-2">
+        <button type="button" className="btn primary" onClick={() => void save()}>
+          Keep changes <kbd>Ctrl Enter</kbd>
+        </button>
+        <button
+          type="button"
+          className="btn"
+          onClick={() => {
+            forget();
+            onLeave();
+          }}
+        >
+          Leave as it was
+        </button>
+      </div>
     </section>
   );
 }

@@ -28,11 +28,27 @@ export function SavedSieves({ sieve, onOpen }: { sieve: string; onOpen(sieve: st
         {data.length === 0 && <p className="quiet small">None saved yet.</p>}
         {data.map((one) => (
           <div key={one.id} className="flex gap-2">
-            <button type="button" className="link grow text-left" onClick={() => onOpen(one.sieve)}>{one.name}</button>
-            <button type="button" className="link" onClick={() => void api(`/sieves/${one.id}`, { method: 'DELETE' }).then(changed)}>drop</button>
-          </div>))}
+            <button type="button" className="link grow text-left" onClick={() => onOpen(one.sieve)}>
+              {one.name}
+            </button>
+            <button
+              type="button"
+              className="link"
+              onClick={() => void api(`/sieves/${one.id}`, { method: 'DELETE' }).then(changed)}
+            >
+              drop
+            </button>
+          </div>
+        ))}
         <Field label="Save this one as" value={name} onValue={setName} />
-        <button type="button" className="btn" disabled={name.trim() === ''} onClick={() => void save()}>Save sieve</button>
+        <button
+          type="button"
+          className="btn"
+          disabled={name.trim() === ''}
+          onClick={() => void save()}
+        >
+          Save sieve
+        </button>
       </div>
     </details>
   );

@@ -13,8 +13,24 @@ export interface MemoDraft {
   lines: DraftLine[];
 }
 
-export const EMPTY_DRAFT: MemoDraft = { party: '', due: '', pricesUntil: '', handedTo: '', carriedBy: 'Hand, signed for', terms: '', remarks: '', scan: '', lines: [] };
+export const EMPTY_DRAFT: MemoDraft = {
+  party: '',
+  due: '',
+  pricesUntil: '',
+  handedTo: '',
+  carriedBy: 'Hand, signed for',
+  terms: '',
+  remarks: '',
+  scan: '',
+  lines: [],
+};
 
 /** Lines as the API books them. */
-export const linesToBook = (lines: DraftLine[]) => lines.map(({ lot, weight, pieces, price, sum, placeId }) =>
-  ({ lot, weight, pieces, place: placeId, ...(sum === null ? { price: price ?? 0 } : { sum }) }));
+export const linesToBook = (lines: DraftLine[]) =>
+  lines.map(({ lot, weight, pieces, price, sum, placeId }) => ({
+    lot,
+    weight,
+    pieces,
+    place: placeId,
+    ...(sum === null ? { price: price ?? 0 } : { sum }),
+  }));

@@ -16,8 +16,18 @@ interface Stored {
  * A draft that is never lost: in this browser at once, in the house a moment later. Without a
  * connection it stays here and says so.
  */
-export function useMemoDraft(openId: string | undefined): { draft: MemoDraft; change(part: Partial<MemoDraft>): void; state: string; id: string | null; keepNow(): Promise<string | null>; forget(): void; isReady: boolean } {
-  const [stored, setStored] = useState<Stored>(() => (openId ? { id: openId, version: 1, draft: EMPTY_DRAFT } : readLocal()));
+export function useMemoDraft(openId: string | undefined): {
+  draft: MemoDraft;
+  change(part: Partial<MemoDraft>): void;
+  state: string;
+  id: string | null;
+  keepNow(): Promise<string | null>;
+  forget(): void;
+  isReady: boolean;
+} {
+  const [stored, setStored] = useState<Stored>(() =>
+    openId ? { id: openId, version: 1, draft: EMPTY_DRAFT } : readLocal(),
+  );
   const [state, setState] = useState('');
   const [isReady, setReady] = useState(!openId);
   const latest = useRef(stored);
@@ -27,7 +37,9 @@ export function useMemoDraft(openId: string | undefined): { draft: MemoDraft; ch
   useEffect(() => {
     if (!openId) return;
     void api<{ id: string; version: number; body: MemoDraft }>(`/drafts/${openId}`)
-      .then(({ id, version, body }) => setStored({ id, version, draft: { ...EMPTY_DRAFT, ...body } }))
+      .then(({ id, version, body }) =>
+        setStored({ id, version, draft: { ...EMPTY_DRAFT, ...body } }),
+      )
       .catch((problem: unknown) => setState(problem instanceof Error ? problem.message : ''))
       .finally(() => setReady(true));
   }, [openId]);
@@ -45,20 +57,27 @@ export function useMemoDraft(openId: string | undefined): { draft: MemoDraft; ch
       setState(`Draft kept ${clock}`);
       return kept.id;
     } catch (problem) {
-      setState(problem instanceof Problem ? `Draft kept here only: ${problem.message}` : `Not saved. The connection dropped at ${clock}. Your ${draft.lines.length} lines are kept here.`);
+      setState(
+        problem instanceof Problem
+          ? `Draft kept here only: ${problem.message}`
+          : `Not saved. The connection dropped at ${clock}. Your ${draft.lines.length} lines are kept here.`,
+      );
       return latest.current.id;
     }
   }, []);
 
-  const change = useCallback((part: Partial<MemoDraft>) => {
-    setStored((was) => {
-      const next = { ...was, draft: { ...was.draft, ...part } };
-      writeLocal(next);
-      return next;
-    });
-    window.clearTimeout(timer.current);
-    timer.current = window.setTimeout(() => void keepNow(), KEEPS_AFTER_MS);
-  }, [keepNow]);
+  const change = useCallback(
+    (part: Partial<MemoDraft>) => {
+      setStored((was) => {
+        const next = { ...was, draft: { ...was.draft, ...part } };
+        writeLocal(next);
+        return next;
+      });
+      window.clearTimeout(timer.current);
+      timer.current = window.setTimeout(() => void keepNow(), KEEPS_AFTER_MS);
+    },
+    [keepNow],
+  );
 
   const forget = useCallback(() => {
     window.clearTimeout(timer.current);
@@ -68,7 +87,11 @@ export function useMemoDraft(openId: string | undefined): { draft: MemoDraft; ch
   return { draft: stored.draft, change, state, id: stored.id, keepNow, forget, isReady };
 }
 
-async function send(id: string | null, version: number, draft: MemoDraft): Promise<{ id: string; version: number }> {
+async function send(
+  id: string | null,
+  version: number,
+  draft: MemoDraft,
+): Promise<{ id: string; version: number }> {
   const body = { body: draft, party: draft.party };
   if (!id) return api('/drafts', { method: 'POST', body });
   try {
@@ -76,10 +99,16 @@ async function send(id: string | null, version: number, draft: MemoDraft): Promi
     return { id, version: kept.version };
   } catch (problem) {
     // Booked or thrown away elsewhere: what is typed here begins a new draft.
-    if (problem instanceof Problem && problem.body.status === 404) return api('/drafts', { method: 'POST', body });
+    if (problem instanceof Problem && problem.body.status === 404)
+      return api('/drafts', { method: 'POST', body });
     if (problem instanceof Problem && problem.body.status === 412) {
       const { version: current } = problem.body.current as { version: number };
-      return { id, version: (await api<{ version: number }>(`/drafts/${id}`, { method: 'PUT', version: current, body })).version };
+      return {
+        id,
+        version: (
+          await api<{ version: number }>(`/drafts/${id}`, { method: 'PUT', version: current, body })
+        ).version,
+      };
     }
     throw problem;
   }

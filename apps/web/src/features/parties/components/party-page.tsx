@@ -1,5 +1,12 @@
 import type { PartyDetail } from '@foldwell/contracts';
-import { averageCarats, formatAmount, formatCarats, formatMoney, readMoney, shortDate } from '@foldwell/quantities';
+import {
+  averageCarats,
+  formatAmount,
+  formatCarats,
+  formatMoney,
+  readMoney,
+  shortDate,
+} from '@foldwell/quantities';
 import { useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Link, useNavigate, useParams } from 'react-router-dom';
@@ -17,37 +24,110 @@ import { useMay, useMe } from '../../../lib/session';
 /** One customer: limit, terms, exposure now, what they hold. */
 export function PartyPage() {
   const { number = '' } = useParams();
-  const query = useQuery({ queryKey: ['party', number], queryFn: () => api<PartyDetail>(`/parties/${number}`) });
-  return <Loaded query={query} says={`Opening C ${number}.`}>{(party) => <Party party={party} key={party.version} />}</Loaded>;
+  const query = useQuery({
+    queryKey: ['party', number],
+    queryFn: () => api<PartyDetail>(`/parties/${number}`),
+  });
+  return (
+    <Loaded query={query} says={`Opening C ${number}.`}>
+      {(party) => <Party party={party} key={party.version} />}
+    </Loaded>
+  );
 }
 
 function Party({ party }: { party: PartyDetail }) {
-  const { house: { today } } = useMe();
+  const {
+    house: { today },
+  } = useMe();
   const navigate = useNavigate();
   const rows = useCurrentRow(party.memos.length);
   const mayWrite = useMay('owner', 'dealer');
-  useKeys([...rows.keys, { key: 'Enter', says: 'open memo', act: () => { const memo = party.memos[rows.current]; if (memo) void navigate(`/memos/${memo.number}`); } },
-    ...(mayWrite ? [{ key: 'N', says: 'write a memo', act: () => void navigate(`/memos/new?party=${party.number}`) }] : [])]);
+  useKeys([
+    ...rows.keys,
+    {
+      key: 'Enter',
+      says: 'open memo',
+      act: () => {
+        const memo = party.memos[rows.current];
+        if (memo) void navigate(`/memos/${memo.number}`);
+      },
+    },
+    ...(mayWrite
+      ? [
+          {
+            key: 'N',
+            says: 'write a memo',
+            act: () => void navigate(`/memos/new?party=${party.number}`),
+          },
+        ]
+      : []),
+  ]);
   const { exposure, keeps } = party;
   return (
     <>
       <div className="head">
-        <h1>{party.name}</h1><span className="soft">C {party.number}, {party.town || 'no town'}. {party.parts.join(', ')}.</span>
-        <div className="acts">{mayWrite && <Link className="btn primary" to={`/memos/new?party=${party.number}`}>Write a memo <kbd>N</kbd></Link>}</div>
+        <h1>{party.name}</h1>
+        <span className="soft">
+          C {party.number}, {party.town || 'no town'}. {party.parts.join(', ')}.
+        </span>
+        <div className="acts">
+          {mayWrite && (
+            <Link className="btn primary" to={`/memos/new?party=${party.number}`}>
+              Write a memo <kbd>N</kbd>
+            </Link>
+          )}
+        </div>
       </div>
       <section className="px-6 pb-4 border-b border-crease-2">
-        <LimitBar exposure={exposure} scale={Math.max(1, exposure.total, (exposure.limit ?? 0) * 1.2)} isTall />
+        <LimitBar
+          exposure={exposure}
+          scale={Math.max(1, exposure.total, (exposure.limit ?? 0) * 1.2)}
+          isTall
+        />
         <dl className="flex flex-wrap gap-x-10 gap-y-1 pt-2">
-          {([['On memo', formatMoney(exposure.onMemo, exposure.currency)], ['Kept, not invoiced', formatMoney(exposure.kept, exposure.currency)], ['Exposure now', formatMoney(exposure.total, exposure.currency)],
-            ['Limit', exposure.limit === null ? 'none set' : formatMoney(exposure.limit, exposure.currency)], ['Keeps, of what we send', keeps.sent > 0 ? `${Math.round((100 * keeps.kept) / keeps.sent)} % of ${formatCarats(keeps.sent)} ct, ${keeps.memos} memos` : 'nothing sent yet'],
-            ['Days out, average', keeps.daysOut === null ? '–' : `${keeps.daysOut} d`], ['Differences', keeps.differences === 0 ? 'none' : String(keeps.differences)]] as const).map(([name, value]) => <div key={name}><dt className="tiny quiet">{name}</dt><dd className="font-semibold">{value}</dd></div>)}
+          {(
+            [
+              ['On memo', formatMoney(exposure.onMemo, exposure.currency)],
+              ['Kept, not invoiced', formatMoney(exposure.kept, exposure.currency)],
+              ['Exposure now', formatMoney(exposure.total, exposure.currency)],
+              [
+                'Limit',
+                exposure.limit === null
+                  ? 'none set'
+                  : formatMoney(exposure.limit, exposure.currency),
+              ],
+              [
+                'Keeps, of what we send',
+                keeps.sent > 0
+                  ? `${Math.round((100 * keeps.kept) / keeps.sent)} % of ${formatCarats(keeps.sent)} ct, ${keeps.memos} memos`
+                  : 'nothing sent yet',
+              ],
+              ['Days out, average', keeps.daysOut === null ? '–' : `${keeps.daysOut} d`],
+              ['Differences', keeps.differences === 0 ? 'none' : String(keeps.differences)],
+            ] as const
+          ).map(([name, value]) => (
+            <div key={name}>
+              <dt className="tiny quiet">{name}</dt>
+              <dd className="font-semibold">{value}</dd>
+            </div>
+          ))}
         </dl>
-        {party.papers && <p className="note stop mt-2">{party.papers}. Nothing leaves without an owner’s reason.</p>}
+        {party.papers && (
+          <p className="note stop mt-2">
+            {party.papers}. Nothing leaves without an owner’s reason.
+          </p>
+        )}
       </section>
       <section className="grid xl:grid-cols-[minmax(0,1fr)_470px] flex-1 min-h-0">
         <div className="min-w-0 overflow-x-auto">
-          <div className="section-head"><h2>Memos</h2></div>
-          {party.memos.length === 0 ? <p className="px-6 py-2 soft">No memo yet.</p> : <MemoTable memos={party.memos} today={today} rows={rows} />}
+          <div className="section-head">
+            <h2>Memos</h2>
+          </div>
+          {party.memos.length === 0 ? (
+            <p className="px-6 py-2 soft">No memo yet.</p>
+          ) : (
+            <MemoTable memos={party.memos} today={today} rows={rows} />
+          )}
           <Holds party={party} />
         </div>
         <Edit party={party} />
@@ -57,15 +137,58 @@ function Party({ party }: { party: PartyDetail }) {
 }
 
 function Holds({ party }: { party: PartyDetail }) {
-  const { house: { today } } = useMe();
+  const {
+    house: { today },
+  } = useMe();
   return (
     <>
-      <div className="section-head"><h2>What they hold</h2><span className="quiet small">{party.holds.length} lines</span></div>
-      <table><caption>What {party.name} hold</caption>
-        <thead><tr><th scope="col">Lot</th><th scope="col">What</th><th scope="col">Memo</th><th scope="col" className="n">Pcs</th><th scope="col" className="n">Weight <span className="unit">ct</span></th><th scope="col" className="n">Value <span className="unit">{party.exposure.currency}</span></th><th scope="col">Due</th></tr></thead>
-        <tbody>{party.holds.map((line) => (
-          <tr key={line.memo + line.lot}><td className="lot"><Link to={`/lots/${line.lot}`}>{line.lot}</Link></td><td>{line.what} {line.pieces > 1 && <span className="quiet">average {averageCarats(line.weight, line.pieces)} ct</span>}</td><td><Link to={`/memos/${line.memo}`}>M {line.memo}</Link></td>
-            <td className="n">{line.pieces}</td><td className="n">{formatCarats(line.weight)}</td><td className="n">{formatAmount(line.value, party.exposure.currency)}</td><td className={line.due < today ? 'red' : ''}>{shortDate(line.due, today)}</td></tr>))}</tbody>
+      <div className="section-head">
+        <h2>What they hold</h2>
+        <span className="quiet small">{party.holds.length} lines</span>
+      </div>
+      <table>
+        <caption>What {party.name} hold</caption>
+        <thead>
+          <tr>
+            <th scope="col">Lot</th>
+            <th scope="col">What</th>
+            <th scope="col">Memo</th>
+            <th scope="col" className="n">
+              Pcs
+            </th>
+            <th scope="col" className="n">
+              Weight <span className="unit">ct</span>
+            </th>
+            <th scope="col" className="n">
+              Value <span className="unit">{party.exposure.currency}</span>
+            </th>
+            <th scope="col">Due</th>
+          </tr>
+        </thead>
+        <tbody>
+          {party.holds.map((line) => (
+            <tr key={line.memo + line.lot}>
+              <td className="lot">
+                <Link to={`/lots/${line.lot}`}>{line.lot}</Link>
+              </td>
+              <td>
+                {line.what}{' '}
+                {line.pieces > 1 && (
+                  <span className="quiet">
+                    average {averageCarats(line.weight, line.pieces)} ct
+                  </span>
+                )}
+              </td>
+              <td>
+                <Link to={`/memos/${line.memo}`}>M {line.memo}</Link>
+              </td>
+              <td className="n">{line.pieces}</td>
+              <td className="n">{formatCarats(line.weight)}</td>
+              <td className="n">{formatAmount(line.value, party.exposure.currency)}</td>
+              <td className={line.due < today ? 'red' : ''}>{shortDate(line.due, today)}</td>
+            </tr>
+          ))}
+        </tbody>
       </table>
     </>
   );
@@ -76,20 +199,52 @@ function Edit({ party }: { party: PartyDetail }) {
   const may = useMay('owner', 'dealer', 'buyer');
   const client = useQueryClient();
   const own = party.particulars;
-  const plain = (amount: number | null | undefined) => (amount == null ? '' : formatAmount(amount, own.currency, true).replaceAll(',', ''));
-  const [form, setForm] = useState({ contact: own.contact, email: own.email, phone: own.phone, address: own.address, terms: own.terms, memoDays: String(own.memoDays), note: own.note,
-    creditLimit: plain(own.creditLimit), memoLimit: plain(own.memoLimit), identityPapersUntil: own.identityPapersUntil ?? '', resaleCertificateUntil: own.resaleCertificateUntil ?? '', sanctionsCheckedOn: own.sanctionsCheckedOn ?? '' });
+  const plain = (amount: number | null | undefined) =>
+    amount == null ? '' : formatAmount(amount, own.currency, true).replaceAll(',', '');
+  const [form, setForm] = useState({
+    contact: own.contact,
+    email: own.email,
+    phone: own.phone,
+    address: own.address,
+    terms: own.terms,
+    memoDays: String(own.memoDays),
+    note: own.note,
+    creditLimit: plain(own.creditLimit),
+    memoLimit: plain(own.memoLimit),
+    identityPapersUntil: own.identityPapersUntil ?? '',
+    resaleCertificateUntil: own.resaleCertificateUntil ?? '',
+    sanctionsCheckedOn: own.sanctionsCheckedOn ?? '',
+  });
   const [error, setError] = useState<unknown>();
-  const text = (name: keyof typeof form) => ({ value: form[name], onValue: (value: string) => setForm({ ...form, [name]: value }), problem: fieldProblem(error, name) });
+  const text = (name: keyof typeof form) => ({
+    value: form[name],
+    onValue: (value: string) => setForm({ ...form, [name]: value }),
+    problem: fieldProblem(error, name),
+  });
   const save = async () => {
     const { creditLimit, memoLimit, memoDays, ...rest } = form;
-    const limits = [creditLimit, memoLimit].map((typed) => (typed.trim() === '' ? null : readMoney(typed, own.currency, 'Limit')));
+    const limits = [creditLimit, memoLimit].map((typed) =>
+      typed.trim() === '' ? null : readMoney(typed, own.currency, 'Limit'),
+    );
     const bad = limits.find((limit) => limit && limit.kind !== 'ok');
     if (bad && 'why' in bad) return setError(new Error(bad.why));
     const [credit, memo] = limits.map((limit) => (limit?.kind === 'ok' ? limit.value : null));
-    const dates = Object.fromEntries((['identityPapersUntil', 'resaleCertificateUntil', 'sanctionsCheckedOn'] as const).map((name) => [name, rest[name] || null]));
+    const dates = Object.fromEntries(
+      (['identityPapersUntil', 'resaleCertificateUntil', 'sanctionsCheckedOn'] as const).map(
+        (name) => [name, rest[name] || null],
+      ),
+    );
     try {
-      await api(`/parties/${party.number}`, { method: 'PATCH', version: party.version, body: { ...rest, ...dates, memoDays: Number(memoDays), ...(isOwner && { creditLimit: credit, memoLimit: memo }) } });
+      await api(`/parties/${party.number}`, {
+        method: 'PATCH',
+        version: party.version,
+        body: {
+          ...rest,
+          ...dates,
+          memoDays: Number(memoDays),
+          ...(isOwner && { creditLimit: credit, memoLimit: memo }),
+        },
+      });
       await client.invalidateQueries();
     } catch (problem) {
       setError(problem);
@@ -99,15 +254,41 @@ function Edit({ party }: { party: PartyDetail }) {
     <aside className="side grid gap-3 content-start">
       <h2>Limit, terms and papers</h2>
       <div className="grid grid-cols-2 gap-3">
-        {isOwner ? <><Field label="Limit" unit={own.currency} isNumber {...text('creditLimit')} /><Field label="Limit for one memo" unit={own.currency} isNumber {...text('memoLimit')} /></> : <p className="col-span-2 tiny quiet">Limits, owner only. Ask an owner.</p>}
-        <Field label="Memo terms" unit="d" isNumber {...text('memoDays')} /><Field label="Terms" {...text('terms')} />
-        <Field label="Identity papers until" type="date" {...text('identityPapersUntil')} /><Field label="Resale certificate until" type="date" {...text('resaleCertificateUntil')} />
-        <Field label="Sanctions lists checked on" type="date" {...text('sanctionsCheckedOn')} /><Field label="Contact" {...text('contact')} /><Field label="E-mail" {...text('email')} /><Field label="Telephone" {...text('phone')} />
+        {isOwner ? (
+          <>
+            <Field label="Limit" unit={own.currency} isNumber {...text('creditLimit')} />
+            <Field label="Limit for one memo" unit={own.currency} isNumber {...text('memoLimit')} />
+          </>
+        ) : (
+          <p className="col-span-2 tiny quiet">Limits, owner only. Ask an owner.</p>
+        )}
+        <Field label="Memo terms" unit="d" isNumber {...text('memoDays')} />
+        <Field label="Terms" {...text('terms')} />
+        <Field label="Identity papers until" type="date" {...text('identityPapersUntil')} />
+        <Field label="Resale certificate until" type="date" {...text('resaleCertificateUntil')} />
+        <Field label="Sanctions lists checked on" type="date" {...text('sanctionsCheckedOn')} />
+        <Field label="Contact" {...text('contact')} />
+        <Field label="E-mail" {...text('email')} />
+        <Field label="Telephone" {...text('phone')} />
       </div>
-      <TextArea label="Address" {...text('address')} rows={2} /><TextArea label="Notes" {...text('note')} rows={2} />
-      <p className="tiny quiet">Parties are checked by hand against sanctions lists; date and person are kept. Identity papers and notes are kept for this purpose only.</p>
+      <TextArea label="Address" {...text('address')} rows={2} />
+      <TextArea label="Notes" {...text('note')} rows={2} />
+      <p className="tiny quiet">
+        Parties are checked by hand against sanctions lists; date and person are kept. Identity
+        papers and notes are kept for this purpose only.
+      </p>
       <Refused error={error} />
-      {may ? <button type="button" className="btn primary justify-self-start" onClick={() => void save()}>Keep changes</button> : <p className="tiny quiet">Changing customers, owner, dealer and buyer only.</p>}
+      {may ? (
+        <button
+          type="button"
+          className="btn primary justify-self-start"
+          onClick={() => void save()}
+        >
+          Keep changes
+        </button>
+      ) : (
+        <p className="tiny quiet">Changing customers, owner, dealer and buyer only.</p>
+      )}
     </aside>
   );
 }

@@ -28,11 +28,32 @@ export function PasswordPage() {
   return (
     <form className="p-6 grid gap-4 max-w-[460px]" onSubmit={(event) => void submit(event)}>
       <h1>{me.mustChangePassword ? 'Choose your own password' : 'Change password'}</h1>
-      {me.mustChangePassword && <p className="soft">This one was given to you. Nothing else opens until you have your own.</p>}
-      <Field label="Password now" type="password" value={current} onValue={setCurrent} autoComplete="current-password" autoFocus />
-      <Field label="New password" type="password" value={password} onValue={setPassword} autoComplete="new-password" problem={fieldProblem(error, 'password')} help="At least 15 characters, at most 72 bytes. Every other session of yours ends." />
+      {me.mustChangePassword && (
+        <p className="soft">
+          This one was given to you. Nothing else opens until you have your own.
+        </p>
+      )}
+      <Field
+        label="Password now"
+        type="password"
+        value={current}
+        onValue={setCurrent}
+        autoComplete="current-password"
+        autoFocus
+      />
+      <Field
+        label="New password"
+        type="password"
+        value={password}
+        onValue={setPassword}
+        autoComplete="new-password"
+        problem={fieldProblem(error, 'password')}
+        help="At least 15 characters, at most 72 bytes. Every other session of yours ends."
+      />
       <Refused error={error} />
-      <button type="submit" className="btn primary justify-self-start">Keep password <kbd>Enter</kbd></button>
+      <button type="submit" className="btn primary justify-self-start">
+        Keep password <kbd>Enter</kbd>
+      </button>
     </form>
   );
 }

@@ -16,7 +16,10 @@ export function SignInPage() {
   const [search] = useSearchParams();
   const navigate = useNavigate();
   const client = useQueryClient();
-  const empty = useQuery({ queryKey: ['first owner'], queryFn: () => api<{ isEmpty: boolean }>('/first-owner') });
+  const empty = useQuery({
+    queryKey: ['first owner'],
+    queryFn: () => api<{ isEmpty: boolean }>('/first-owner'),
+  });
   if (empty.data?.isEmpty) return <Navigate to="/first-owner" replace />;
   const submit = async (event: FormEvent) => {
     event.preventDefault();
@@ -34,14 +37,39 @@ export function SignInPage() {
   };
   return (
     <main className="min-h-full grid place-items-center p-4">
-      <form className="paper w-full max-w-[420px] p-8 grid gap-4" onSubmit={(event) => void submit(event)}>
-        <h1 className="flex items-center gap-3"><span className="w-8 inline-block"><Mark /></span>Foldwell</h1>
+      <form
+        className="paper w-full max-w-[420px] p-8 grid gap-4"
+        onSubmit={(event) => void submit(event)}
+      >
+        <h1 className="flex items-center gap-3">
+          <span className="w-8 inline-block">
+            <Mark />
+          </span>
+          Foldwell
+        </h1>
         <p className="soft">Every carat is somewhere. Sign in to see where.</p>
-        <Field label="E-mail" type="email" value={email} onValue={setEmail} autoComplete="username" autoFocus />
-        <Field label="Password" type="password" value={password} onValue={setPassword} autoComplete="current-password" />
+        <Field
+          label="E-mail"
+          type="email"
+          value={email}
+          onValue={setEmail}
+          autoComplete="username"
+          autoFocus
+        />
+        <Field
+          label="Password"
+          type="password"
+          value={password}
+          onValue={setPassword}
+          autoComplete="current-password"
+        />
         <Refused error={error} />
-        <button type="submit" className="btn primary justify-center" disabled={isWorking}>Sign in <kbd>Enter</kbd></button>
-        <p className="tiny quiet">Nobody here can read your password. An owner of the house gives a new first one.</p>
+        <button type="submit" className="btn primary justify-center" disabled={isWorking}>
+          Sign in <kbd>Enter</kbd>
+        </button>
+        <p className="tiny quiet">
+          Nobody here can read your password. An owner of the house gives a new first one.
+        </p>
       </form>
     </main>
   );
