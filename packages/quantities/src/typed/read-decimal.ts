@@ -87,9 +87,11 @@ function lone(
 ): Shape[] {
   if (after === '') return [];
   const decimal: Shape = [before, after];
-  const mayGroup = mark === ',' || rules.pointMayGroup === true;
-  if (!mayGroup || after.length !== 3 || !/^[1-9]\d{0,2}$/.test(before)) return [decimal];
-  return [[before + after, ''], decimal];
+  if (after.length !== 3 || !/^[1-9]\d{0,2}$/.test(before)) return [decimal];
+  const thousands: Shape = [before + after, ''];
+  // Nobody writes a decimal comma with more decimals than there are: `1,000 pcs` is a thousand.
+  if (mark === ',') return rules.decimals < 3 ? [thousands] : [thousands, decimal];
+  return rules.pointMayGroup === true ? [thousands, decimal] : [decimal];
 }
 
 /** The digits of a number grouped in threes by one mark (any space or apostrophe by default). */

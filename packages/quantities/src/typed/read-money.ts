@@ -32,11 +32,10 @@ function readPlain(
   return readDecimal(bare, { decimals, what, unit: currency, isSigned: true, pointMayGroup });
 }
 
-/** Where a currency has fewer than three decimals, three digits after a comma are thousands. */
+/** Where a currency has fewer than three decimals, three digits after a point are asked about. */
 function readGrouped(bare: string, currency: string, what: string): Reading<number> {
-  const joined = bare.replace(/^([1-9]\d{0,2}),(\d{3})$/, '$1$2');
-  const reading = readPlain(joined, currency, what, true);
-  // After a point they are neither surely a thousand nor surely a slip of the hand.
+  const reading = readPlain(bare, currency, what, true);
+  // They are neither surely a thousand nor surely a slip of the hand.
   if (reading.kind !== 'ok' || !/^[1-9]\d{0,2}\.\d{3}$/.test(bare)) return reading;
   return bad(
     `${what} “${bare}” has three digits after its point. Write it without thousands marks.`,
