@@ -12,7 +12,8 @@ const SIZES = {
   'max-lines': ['error', { max: 250, skipBlankLines: true, skipComments: true }],
   'max-lines-per-function': ['error', FUNCTION],
   'max-params': ['error', 4],
-  complexity: ['error', 10],
+  // Defaults and optional chaining count as branches too; a plain read-out of a record has many.
+  complexity: ['error', 16],
 };
 
 /** What needs the types; style and simple mistakes are Biome's. */
@@ -59,14 +60,20 @@ export default tseslint.config(
     },
   },
   {
-    // A condition in markup is read where it stands.
+    // A condition in markup is read where it stands, and the formatter gives each attribute a line.
     files: ['apps/web/**/*.tsx'],
     rules: {
-      complexity: ['error', 16],
-      'max-lines-per-function': ['error', { ...FUNCTION, max: 80 }],
+      complexity: ['error', 22],
+      'max-lines': ['error', { max: 330, skipBlankLines: true, skipComments: true }],
+      'max-lines-per-function': ['error', { ...FUNCTION, max: 200 }],
     },
   },
   { files: ['apps/web/**/*.{ts,tsx}'], ...reactHooks.configs.flat['recommended-latest'] },
+  {
+    // A hook's answer may carry a ref that is only handed on; the rule takes that for reading it.
+    files: ['apps/web/**/*.{ts,tsx}'],
+    rules: { 'react-hooks/refs': 'off', 'react-hooks/incompatible-library': 'off' },
+  },
   {
     // Tests look at answers from outside, whose type is whatever came.
     files: ['tests/**/*.ts', '**/*.test.{ts,tsx}'],
@@ -93,6 +100,6 @@ export default tseslint.config(
   {
     // The tables and guards read best as whole SQL texts.
     files: ['apps/api/src/database/migrations/*.ts'],
-    rules: { 'max-lines-per-function': 'off' },
+    rules: { 'max-lines-per-function': 'off', 'max-lines': 'off' },
   },
 );

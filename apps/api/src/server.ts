@@ -29,13 +29,19 @@ export function buildServer(config: Config, db: DataSource): Server {
   app.use(identify, ...securityHeaders(config));
   app.use((req, res, next) => {
     if (['TRACE', 'TRACK', 'CONNECT'].includes(req.method))
-      sendProblem(res, 405, 'method', 'That is not done here.');
+      sendProblem(res, { status: 405, code: 'method', detail: 'That is not done here.' });
     else next();
   });
   const session = sessions(config);
   app.use('/api', api(db, session.handler));
   if (config.webDir) app.use(webFiles(config.webDir));
-  app.use((_req, res) => sendProblem(res, 404, 'not_found', 'There is nothing at that address.'));
+  app.use((_req, res) =>
+    sendProblem(res, {
+      status: 404,
+      code: 'not_found',
+      detail: 'There is nothing at that address.',
+    }),
+  );
   app.use(problems);
   return { app, close: session.close };
 }
@@ -68,7 +74,11 @@ function api(db: DataSource, session: express.RequestHandler): Router {
   router.use(express.json({ limit: '100kb', inflate: false, strict: true }), session);
   for (const route of routes) router[route.method](route.path, answering(route, db));
   router.use((_req, res) =>
-    sendProblem(res, 404, 'not_found', 'There is nothing at that address.'),
+    sendProblem(res, {
+      status: 404,
+      code: 'not_found',
+      detail: 'There is nothing at that address.',
+    }),
   );
   return router;
 }

@@ -1,3 +1,4 @@
+export * from './exposure.js';
 export * from './roles.js';
 export * from './problem.js';
 export * from './people.js';

@@ -15,7 +15,7 @@ import {
 
 import { IsAmount, IsDay, IsPieces, IsWeight, IsWords, Optional } from './fields.js';
 import type { Bar } from './lots.js';
-import type { Exposure } from './parties.js';
+import type { Exposure } from './exposure.js';
 
 export class MemoLineRequest {
   @IsWords(20) lot!: string;

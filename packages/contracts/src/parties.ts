@@ -1,6 +1,7 @@
 import { IsBoolean, IsEmail, IsInt, Length, Max, Min, ValidateIf } from 'class-validator';
 
 import { IsAmount, IsDay, IsWords, Optional } from './fields.js';
+import type { Exposure } from './exposure.js';
 import type { MemoRow } from './memos.js';
 
 export class ChangePartyRequest {
@@ -36,16 +37,6 @@ export class ChangePartyRequest {
 
 export class AddPartyRequest extends ChangePartyRequest {
   @IsWords(200) declare name: string;
-}
-
-/** What a party owes or holds, minor units of its currency. */
-export interface Exposure {
-  onMemo: number;
-  kept: number;
-  total: number;
-  limit: number | null;
-  memoLimit: number | null;
-  currency: string;
 }
 
 export interface PartyRow {

@@ -94,3 +94,9 @@ export function changedMeanwhile(current: unknown): Refusal {
     { current },
   );
 }
+
+/** One plain text of the address; empty where it isn't there. */
+export function queryText(req: Request, name: string): string {
+  const value = req.query[name];
+  return typeof value === 'string' ? value.trim().slice(0, 200) : '';
+}

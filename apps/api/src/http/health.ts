@@ -17,8 +17,13 @@ export function health(db: DataSource): RequestHandler {
         migrations: waiting === 0 ? 'all applied' : `${waiting} to apply`,
       });
     } catch {
-      sendProblem(res, 503, 'not_now', 'The ledger can’t be reached just now.', {
-        database: 'away',
+      sendProblem(res, {
+        status: 503,
+        code: 'not_now',
+        detail: 'The ledger can’t be reached just now.',
+        extra: {
+          database: 'away',
+        },
       });
     }
   };

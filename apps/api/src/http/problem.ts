@@ -23,14 +23,16 @@ const TITLES: Record<number, string> = {
   503: 'Not now',
 };
 
+/** What is said: the status, the stable word, the sentence, and what else the page needs. */
+interface Said {
+  status: number;
+  code: string;
+  detail: string;
+  extra?: Record<string, unknown>;
+}
+
 /** Writes an error as application/problem+json. */
-export function sendProblem(
-  res: Response,
-  status: number,
-  code: string,
-  detail: string,
-  extra: Record<string, unknown> = {},
-): void {
+export function sendProblem(res: Response, { status, code, detail, extra = {} }: Said): void {
   const body: ProblemBody = {
     type: 'about:blank',
     title: TITLES[status] ?? 'Refused',
@@ -53,19 +55,23 @@ export const problems: ErrorRequestHandler = (error: unknown, _req, res, next) =
     return;
   }
   if (error instanceof Refusal)
-    sendProblem(res, error.status, error.code, error.sentence, error.extra);
+    sendProblem(res, {
+      status: error.status,
+      code: error.code,
+      detail: error.sentence,
+      extra: error.extra,
+    });
   else if (!sendDatabaseProblem(error, res) && !sendBodyProblem(error, res)) {
     log({
       level: 'error',
       requestId: res.locals.requestId,
       error: error instanceof Error ? error.stack : 'unknown',
     });
-    sendProblem(
-      res,
-      500,
-      'our_fault',
-      'Something broke on our side. Nothing was booked. Try again, or tell the house.',
-    );
+    sendProblem(res, {
+      status: 500,
+      code: 'our_fault',
+      detail: 'Something broke on our side. Nothing was booked. Try again, or tell the house.',
+    });
   }
 };
 
@@ -83,33 +89,34 @@ function sendDatabaseProblem(error: unknown, res: Response): boolean {
       sentenceOf(constraint, facts) ?? 'A rule of the house says no. Nothing was booked.';
     if (code === '23514' || code === '42501')
       log({ level: 'info', requestId: res.locals.requestId, refused: constraint });
-    sendProblem(
-      res,
-      code === '23503' || code === '23502' ? 422 : 409,
-      constraint || 'rule',
-      sentence,
-      { facts },
-    );
+    sendProblem(res, {
+      status: code === '23503' || code === '23502' ? 422 : 409,
+      code: constraint || 'rule',
+      detail: sentence,
+      extra: { facts },
+    });
   } else if (/^22|^2201B/.test(code))
-    sendProblem(
-      res,
-      422,
-      'not_readable',
-      'Something typed can’t be kept as it is. Look for odd characters or numbers.',
-    );
+    sendProblem(res, {
+      status: 422,
+      code: 'not_readable',
+      detail: 'Something typed can’t be kept as it is. Look for odd characters or numbers.',
+    });
   else if (code === '42501') {
     log({ level: 'error', requestId: res.locals.requestId, denied: constraint || code });
-    sendProblem(res, 403, 'denied', 'The database does not let this happen.');
+    sendProblem(res, {
+      status: 403,
+      code: 'denied',
+      detail: 'The database does not let this happen.',
+    });
   } else if (
     /^(40001|40P01|55P03|57014|53|57P0|08|ECONN|ENOTFOUND|EPIPE|ETIMEDOUT)/.test(code) ||
     isAway(error)
   ) {
-    sendProblem(
-      res,
-      503,
-      'not_now',
-      'The ledger can’t be reached just now. Nothing was lost; try again in a few seconds.',
-    );
+    sendProblem(res, {
+      status: 503,
+      code: 'not_now',
+      detail: 'The ledger can’t be reached just now. Nothing was lost; try again in a few seconds.',
+    });
   } else return false;
   return true;
 }
@@ -117,7 +124,7 @@ function sendDatabaseProblem(error: unknown, res: Response): boolean {
 /** The driver's error, however deep it lies. */
 export function databaseError(error: unknown): DatabaseError {
   if (error instanceof QueryFailedError) return error.driverError as DatabaseError;
-  return typeof error === 'object' && error !== null ? (error as DatabaseError) : {};
+  return typeof error === 'object' && error !== null ? error : {};
 }
 
 const isAway = (error: unknown) =>
@@ -137,10 +144,19 @@ function readFacts(detail: string | undefined): Record<string, string | number> 
 function sendBodyProblem(error: unknown, res: Response): boolean {
   const { type = '', status = 500 } = (error ?? {}) as { type?: string; status?: number };
   if (type === 'entity.too.large')
-    sendProblem(res, 413, 'too_large', 'That is more than 100 kB; nothing was kept.');
+    sendProblem(res, {
+      status: 413,
+      code: 'too_large',
+      detail: 'That is more than 100 kB; nothing was kept.',
+    });
   else if (type === 'encoding.unsupported' || type === 'charset.unsupported')
-    sendProblem(res, 415, 'not_json', 'Only plain JSON in UTF-8 is read here.');
-  else if (status === 400) sendProblem(res, 400, 'not_readable', 'The request can’t be read.');
+    sendProblem(res, {
+      status: 415,
+      code: 'not_json',
+      detail: 'Only plain JSON in UTF-8 is read here.',
+    });
+  else if (status === 400)
+    sendProblem(res, { status: 400, code: 'not_readable', detail: 'The request can’t be read.' });
   else return false;
   return true;
 }

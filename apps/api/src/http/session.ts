@@ -59,24 +59,24 @@ export function sessions(config: Config): { handler: RequestHandler; close(): Pr
   };
 }
 
+/** Ends a promise the way the session's callback says. */
+const settle = (done: () => void, fail: (error: Error) => void) => (error: unknown) => {
+  if (error) fail(error instanceof Error ? error : new Error('the session could not be kept'));
+  else done();
+};
+
 /** A new session under a new id, so that an id planted before sign-in is worth nothing. */
 export async function beginSession(req: Request, personId: string): Promise<void> {
-  await new Promise<void>((done, fail) =>
-    req.session.regenerate((error) => (error ? fail(error) : done())),
-  );
+  await new Promise<void>((done, fail) => req.session.regenerate(settle(done, fail)));
   Object.assign(req.session, {
     personId,
     startedAt: Date.now(),
     csrf: randomBytes(24).toString('base64url'),
   });
-  await new Promise<void>((done, fail) =>
-    req.session.save((error) => (error ? fail(error) : done())),
-  );
+  await new Promise<void>((done, fail) => req.session.save(settle(done, fail)));
 }
 
 /** Ends this session; the cookie is worth nothing from now on. */
 export async function endSession(req: Request): Promise<void> {
-  await new Promise<void>((done, fail) =>
-    req.session.destroy((error) => (error ? fail(error) : done())),
-  );
+  await new Promise<void>((done, fail) => req.session.destroy(settle(done, fail)));
 }

@@ -5,7 +5,7 @@ import { SignedIn } from '../lib/session';
 import { Shell } from './shell';
 
 const page = <T extends string>(load: () => Promise<Record<T, ComponentType>>, name: T) =>
-  createElement(lazy(async () => ({ default: (await load())[name] as ComponentType })));
+  createElement(lazy(async () => ({ default: (await load())[name] })));
 
 /** Every sheet by its address; each is loaded when it is opened. */
 export const router = createBrowserRouter([

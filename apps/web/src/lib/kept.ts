@@ -1,5 +1,7 @@
 import { useCallback, useState } from 'react';
 
+import { Offline } from './api-client';
+
 /** What was typed into a form, kept in this browser through a reload, a refusal and a lost connection. */
 export function useKept<T>(name: string, empty: T): [T, (change: Partial<T>) => void, () => void] {
   const key = `foldwell form ${name}`;
@@ -26,8 +28,14 @@ export function useKept<T>(name: string, empty: T): [T, (change: Partial<T>) => 
   return [value, change, forget];
 }
 
-/** A key for one booking: the same until it went through, so that sending it twice posts once. */
-export function useBookingKey(): [string, () => void] {
+/**
+ * A key for one booking, and how to say that it is settled: after an answer the next one gets a new
+ * key; after a lost connection the same key is sent again, so that what was booked isn't booked twice.
+ */
+export function useBookingKey(): [string, (problem?: unknown) => void] {
   const [key, setKey] = useState(() => crypto.randomUUID());
-  return [key, () => setKey(crypto.randomUUID())];
+  const settled = (problem?: unknown) => {
+    if (!(problem instanceof Offline)) setKey(crypto.randomUUID());
+  };
+  return [key, settled];
 }

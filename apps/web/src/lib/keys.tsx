@@ -1,6 +1,7 @@
 import {
   createContext,
   type ReactNode,
+  useCallback,
   useContext,
   useEffect,
   useMemo,
@@ -23,7 +24,7 @@ interface Keys {
   state: string;
   setKeys(keys: ScreenKey[]): void;
   setState(state: string): void;
-  onScan: React.RefObject<((text: string) => void) | null>;
+  setScan(take: ((text: string) => void) | null): void;
 }
 
 const KeysContext = createContext<Keys | null>(null);
@@ -43,16 +44,23 @@ export function KeysProvider({ children, ...acts }: BandActs & { children: React
   const [shown, setKeys] = useState<ScreenKey[]>([]);
   const [state, setState] = useState('');
   const onScan = useRef<((text: string) => void) | null>(null);
+  const setScan = useCallback((take: ((text: string) => void) | null) => {
+    onScan.current = take;
+  }, []);
   const latest = useRef({ shown, ...acts });
   latest.current = { shown, ...acts };
   useEffect(() => listen(latest, onScan), []);
-  const value = useMemo(() => ({ shown, state, setKeys, setState, onScan }), [shown, state]);
+  const value = useMemo(
+    () => ({ shown, state, setKeys, setState, setScan }),
+    [shown, state, setScan],
+  );
   return <KeysContext value={value}>{children}</KeysContext>;
 }
 
+type Scan = React.RefObject<((text: string) => void) | null>;
 type Latest = React.RefObject<BandActs & { shown: ScreenKey[] }>;
 
-function listen(latest: Latest, onScan: Keys['onScan']): () => void {
+function listen(latest: Latest, onScan: Scan): () => void {
   let goesAt = 0;
   const burst = { text: '', at: 0 };
   const onKey = (event: KeyboardEvent) => {
@@ -62,7 +70,7 @@ function listen(latest: Latest, onScan: Keys['onScan']): () => void {
       event.target instanceof HTMLElement &&
       event.target.matches('input, textarea, select, [contenteditable]');
     const name = nameOf(event);
-    if (isField && name === 'Esc') (event.target as HTMLElement).blur();
+    if (isField && name === 'Esc') event.target.blur();
     const isPlain = !event.ctrlKey && !event.metaKey && !event.altKey;
     if (!isField && isPlain && Date.now() - goesAt < 1500 && /^[A-Z]$/.test(name)) {
       goesAt = 0;
@@ -75,35 +83,34 @@ function listen(latest: Latest, onScan: Keys['onScan']): () => void {
         goesAt = Date.now();
         return;
       }
-      if (name === '/') {
+      const acts = { '/': latest.current.focusPickUp, '?': latest.current.showAll };
+      if (name === '/' || name === '?') {
         event.preventDefault();
-        latest.current.focusPickUp();
-        return;
-      }
-      if (name === '?') {
-        event.preventDefault();
-        latest.current.showAll();
+        acts[name]();
         return;
       }
     }
-    const found = latest.current.shown.find(
-      (one) => one.key.split(' or ').includes(name) && (!isField || one.inFields),
-    );
-    if (!found || (/^[A-Z]$/.test(name) && !lettersAreOn())) return;
-    if (event.target instanceof HTMLButtonElement && (name === 'Enter' || name === 'Space')) return;
-    if (event.target instanceof HTMLAnchorElement && name === 'Enter') return;
-    event.preventDefault();
-    found.act();
+    actOn(event, name, isField, latest.current.shown);
   };
   window.addEventListener('keydown', onKey);
   return () => window.removeEventListener('keydown', onKey);
+}
+
+/** Does what the open screen has for this key, unless the control in focus has its own use of it. */
+function actOn(event: KeyboardEvent, name: string, isField: boolean, shown: ScreenKey[]): void {
+  const found = shown.find((one) => one.key === name && (!isField || one.inFields));
+  if (!found || (/^[A-Z]$/.test(name) && !lettersAreOn())) return;
+  if (event.target instanceof HTMLButtonElement && (name === 'Enter' || name === 'Space')) return;
+  if (event.target instanceof HTMLAnchorElement && name === 'Enter') return;
+  event.preventDefault();
+  found.act();
 }
 
 /** A burst of characters ending in Enter is the scanner: to the screen's scan line, or else to Pick up. */
 function tookScan(
   event: KeyboardEvent,
   burst: { text: string; at: number },
-  onScan: Keys['onScan'],
+  onScan: Scan,
   latest: Latest,
 ): boolean {
   const isField =
@@ -150,15 +157,17 @@ export function useKeys(keys: ScreenKey[], state = ''): void {
   const latest = useRef(keys);
   latest.current = keys;
   const names = keys.map((key) => `${key.key} ${key.says}`).join('|');
+  const setKeys = context?.setKeys;
+  const setState = context?.setState;
   useEffect(() => {
-    context?.setKeys(
+    setKeys?.(
       latest.current.map((key, index) => ({ ...key, act: () => latest.current[index]?.act() })),
     );
-    return () => context?.setKeys([]);
-  }, [names, context?.setKeys]);
+    return () => setKeys?.([]);
+  }, [names, setKeys]);
   useEffect(() => {
-    context?.setState(state);
-  }, [state, context?.setState]);
+    setState?.(state);
+  }, [state, setState]);
 }
 
 /** Sends scans to this screen's own line while it is open. */
@@ -166,13 +175,11 @@ export function useScanner(take: (text: string) => void): void {
   const context = useContext(KeysContext);
   const latest = useRef(take);
   latest.current = take;
+  const setScan = context?.setScan;
   useEffect(() => {
-    if (!context) return;
-    context.onScan.current = (text) => latest.current(text);
-    return () => {
-      context.onScan.current = null;
-    };
-  }, [context?.onScan]);
+    setScan?.((text) => latest.current(text));
+    return () => setScan?.(null);
+  }, [setScan]);
 }
 
 /** The key line at the foot: keys left, saved state right. */

@@ -55,6 +55,20 @@ export async function openDemoHouse(db: DataSource): Promise<DemoHouse> {
     `INSERT INTO currency_rate (currency, on_date, rate, person_id) VALUES ('EUR', house_today() - 400, 1.08, $1), ('GBP', house_today() - 400, 1.27, $1)`,
     [people.get('R. Ostrey')?.id],
   );
+  const drawers = await addDrawers(db);
+  await db.query(`INSERT INTO place (kind, name, person_id) VALUES ('person', 'I. Tarn', $1)`, [
+    people.get('I. Tarn')?.id,
+  ]);
+  return {
+    as: (name) => ({ db, person: people.get(name) as Asker }),
+    customers,
+    suppliers,
+    consignors,
+    drawers,
+  };
+}
+
+async function addDrawers(db: DataSource): Promise<string[]> {
   const drawers: string[] = [];
   for (const [safe, count] of [
     ['A', 10],
@@ -69,16 +83,7 @@ export async function openDemoHouse(db: DataSource): Promise<DemoHouse> {
       drawers.push(row?.id ?? '');
     }
   }
-  await db.query(`INSERT INTO place (kind, name, person_id) VALUES ('person', 'I. Tarn', $1)`, [
-    people.get('I. Tarn')?.id,
-  ]);
-  return {
-    as: (name) => ({ db, person: people.get(name) as Asker }),
-    customers,
-    suppliers,
-    consignors,
-    drawers,
-  };
+  return drawers;
 }
 
 async function addParties(

@@ -91,26 +91,24 @@ export class DemoYear {
   }
 
   async #freeLines(count: number): Promise<MemoLineRequest[]> {
-    const rows = await this.house
-      .as('I. Tarn')
-      .db.query<
-        {
-          number: string;
-          kind: string;
-          weight: string;
-          pieces: string;
-          ask: string | null;
-          place: string;
-          is_estimated: boolean;
-        }[]
-      >(
-        `SELECT * FROM (
+    const rows = await this.house.as('I. Tarn').db.query<
+      {
+        number: string;
+        kind: string;
+        weight: string;
+        pieces: string;
+        ask: string | null;
+        place: string;
+        is_estimated: boolean;
+      }[]
+    >(
+      `SELECT * FROM (
          SELECT DISTINCT ON (l.id) l.number, l.kind, b.weight, b.pieces, l.ask_price AS ask, b.place_id AS place, l.is_estimated
          FROM balance b JOIN place p ON p.id = b.place_id JOIN lot l ON l.id = b.lot_id
          WHERE p.kind = 'drawer' AND b.weight > 0 AND l.ask_price IS NOT NULL ORDER BY l.id, b.weight DESC) x
        ORDER BY md5(x.number || $1) LIMIT $2`,
-        [String(this.#acts), count],
-      );
+      [String(this.#acts), count],
+    );
     return rows.map((row) => {
       const [weight, pieces] = [Number(row.weight), Number(row.pieces)];
       const isPart = row.kind === 'parcel' && weight > 400 && pieces > 10;

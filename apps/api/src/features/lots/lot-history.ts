@@ -84,7 +84,7 @@ const said = (field: string, value: unknown) => {
   if (value === null || value === '' || value === undefined) return 'nothing';
   if (/price/.test(field)) return `${(Number(value) / 100).toLocaleString('en-US')} per ct`;
   if (/stated/.test(field)) return `${formatCarats(Number(value))} ct`;
-  return typeof value === 'object' ? JSON.stringify(value) : String(value);
+  return typeof value === 'string' ? value : JSON.stringify(value);
 };
 
 function sentence({

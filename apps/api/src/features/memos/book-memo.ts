@@ -1,6 +1,5 @@
 import { BookMemoRequest, type BookedMemo, type MemoLineRequest } from '@foldwell/contracts';
 import { sendOut } from '@foldwell/ledger';
-import { lineAmount, longDate, originWords } from '@foldwell/quantities';
 import type { Request } from 'express';
 
 import { readBody } from '../../http/body.js';
@@ -11,21 +10,15 @@ import type { Answer, Context } from '../../http/route.js';
 import type { Written } from '../ledger/act.js';
 import { answeredBefore, type Key, keyOf, postAct } from '../ledger/post-act.js';
 import { houseToday } from '../lots/list-lots.js';
-import { type LotRecord, lotRow, SELECT_LOT, whatWords } from '../lots/lot-row.js';
-import { partyByNumber } from '../parties/parties.js';
-import type { Party } from '../parties/party.entity.js';
+import { type LotRecord, SELECT_LOT } from '../lots/lot-row.js';
+import { type FoundParty, partyByNumber } from '../parties/parties.js';
 import { holdingsOf, whoHasIt } from './holders.js';
+import { type PlannedLine, snapshotOf } from './memo-snapshot.js';
 
 /** Books a memo out, whole or not at all; over a limit it waits with its reason. */
 export async function bookMemo(req: Request, ctx: Context): Promise<Answer> {
   const request = await readBody(req, BookMemoRequest);
   return { status: 201, body: await bookOut(ctx, keyOf(req, ctx), request) };
-}
-
-interface PlannedLine extends MemoLineRequest {
-  record: LotRecord;
-  placeId: number;
-  pricedWeight: number;
 }
 
 /** The act itself, as people and the demo house do it. */
@@ -103,7 +96,7 @@ async function plan({ db }: Context, line: MemoLineRequest): Promise<PlannedLine
 
 function newMemo(
   request: BookMemoRequest,
-  party: Party,
+  party: FoundParty,
   lines: PlannedLine[],
 ): Record<string, unknown> {
   const { due, pricesUntil, handedTo, carriedBy, terms, remarks, depositPercent } = request;
@@ -123,66 +116,6 @@ function newMemo(
       agreedSum: line.sum,
       pricedWeight: line.pricedWeight,
       remarks: line.remarks,
-    })),
-  };
-}
-
-/** What the paper says, kept as it was issued: parties, lines in full permitted words, terms. */
-async function snapshotOf(
-  { db, person }: Context,
-  request: BookMemoRequest,
-  party: Party,
-  lines: PlannedLine[],
-): Promise<object> {
-  const [house] = await db.query<
-    {
-      name: string;
-      town: string;
-      step: number;
-      parcel_tolerance: number;
-      memo_text: string;
-      memo_text_version: number;
-      today: string;
-    }[]
-  >(
-    'SELECT name, town, step, parcel_tolerance, memo_text, memo_text_version, house_today()::text AS today FROM house',
-  );
-  return {
-    house: { name: house?.name, town: house?.town },
-    party: { number: party.number, name: party.name, town: party.town, address: party.address },
-    date: request.businessDate ?? house?.today,
-    due: request.due,
-    pricesUntil: request.pricesUntil ?? request.due,
-    currency: party.currency,
-    handedTo: request.handedTo ?? '',
-    carriedBy: request.carriedBy ?? '',
-    terms: request.terms ?? '',
-    remarks: request.remarks ?? '',
-    by: person.name,
-    text: (house?.memo_text ?? '')
-      .replaceAll('{house}', house?.name ?? '')
-      .replaceAll('{due date}', longDate(request.due))
-      .replaceAll('{customer}', party.name)
-      .replaceAll('{price date}', longDate(request.pricesUntil ?? request.due)),
-    textVersion: house?.memo_text_version,
-    tolerance: house?.parcel_tolerance,
-    step: house?.step,
-    lines: lines.map((line, index) => ({
-      position: index + 1,
-      lot: line.record.number,
-      what: whatWords(lotRow(line.record, request.due, false)),
-      origin: originWords(line.record.origin, line.record.treatment),
-      grades: line.record.report_number
-        ? `grades as stated by ${line.record.report_laboratory}`
-        : 'grades as we see them',
-      pieces: line.pieces,
-      isEstimated: line.record.is_estimated,
-      weight: line.weight,
-      pricedWeight: line.pricedWeight,
-      price: line.price ?? null,
-      sum: line.sum ?? null,
-      amount: line.sum ?? lineAmount(line.price ?? 0, line.pricedWeight),
-      remarks: line.remarks ?? '',
     })),
   };
 }

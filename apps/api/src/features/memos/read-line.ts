@@ -59,13 +59,7 @@ async function readScan(
   const parts = lot.reportScanned ? [] : rest;
   const asked = readParts(parts, lot, from, house as House);
   if ('why' in asked) return refused(`${lot.number} not added. ${asked.why}`);
-  const line = await lineOf(
-    db,
-    lot,
-    from,
-    { ...asked, currency: (house as House).currency },
-    today,
-  );
+  const line = await lineOf(db, lot, from, { ...asked, currency: (house as House).currency });
   return { line, says: saysOf(line, from, house as House), warnings: warningsFor(lot) };
 }
 
@@ -115,7 +109,7 @@ function readParts(
     else if (/p(cs)?$/i.test(part)) pieces = reading.value;
     else weight = reading.value;
   }
-  const quantity = quantityOf(lot, from, weight, pieces, step);
+  const quantity = quantityOf(lot, from, { weight, pieces, step });
   return 'why' in quantity ? quantity : { ...quantity, price, sum };
 }
 
@@ -123,9 +117,7 @@ function readParts(
 function quantityOf(
   lot: LotRecord,
   from: Holding,
-  weight: number | null,
-  pieces: number | null,
-  step: number,
+  { weight, pieces, step }: { weight: number | null; pieces: number | null; step: number },
 ): { weight: number; pieces: number } | { why: string } {
   const place = placeWords(from);
   if (lot.kind !== 'parcel') {
@@ -158,9 +150,8 @@ async function lineOf(
   lot: LotRecord,
   from: Holding,
   asked: Asked & { currency: string },
-  today: string,
 ): Promise<DraftLine> {
-  const row = lotRow(lot, today, false);
+  const row = lotRow(lot, '9999-12-31', false);
   const isStated = lot.kind === 'stone' && lot.stated_weight !== null;
   const pricedWeight = isStated ? Number(lot.stated_weight) : asked.weight;
   const bar = barOf(lot);

@@ -2,6 +2,7 @@ import type { MemoDetail, MemoLine } from '@foldwell/contracts';
 import type { Request } from 'express';
 import type { DataSource } from 'typeorm';
 
+import { queryText } from '../../http/body.js';
 import { NotFound } from '../../http/errors.js';
 import type { Answer, Context } from '../../http/route.js';
 import { type LotRecord, lotRow, SELECT_LOT, whatWords } from '../lots/lot-row.js';
@@ -12,7 +13,7 @@ import { flowsOf, memoRows } from './memo-rows.js';
 export async function listMemos(req: Request, { db }: Context): Promise<Answer> {
   const conditions: string[] = [];
   const values: unknown[] = [];
-  const state = String(req.query.state ?? 'open');
+  const state = queryText(req, 'state') || 'open';
   if (state === 'open') conditions.push('NOT m.is_settled');
   if (state === 'late') conditions.push('NOT m.is_settled AND m.due < house_today()');
   if (state === 'settled') conditions.push('m.is_settled');

@@ -8,7 +8,7 @@ import {
 import type { Request } from 'express';
 import type { DataSource, EntityManager } from 'typeorm';
 
-import { changedMeanwhile, readBody, requireVersion } from '../../http/body.js';
+import { changedMeanwhile, queryText, readBody, requireVersion } from '../../http/body.js';
 import { NotFound, Refusal, ValidationFailed } from '../../http/errors.js';
 import type { Answer, Context } from '../../http/route.js';
 import { memoRows } from '../memos/memo-rows.js';
@@ -26,7 +26,7 @@ const PARTS = [
 /** Parties by part and name, with what each owes or holds now. */
 export async function listParties(req: Request, { db }: Context): Promise<Answer> {
   const part = PARTS.find(
-    (one) => one === `is${String(req.query.part ?? '').replace(/^./, (c) => c.toUpperCase())}`,
+    (one) => one === `is${queryText(req, 'part').replace(/^./, (c) => c.toUpperCase())}`,
   );
   const query = db.getRepository(Party).createQueryBuilder('p').orderBy('lower(p.name)').limit(500);
   if (part) query.andWhere(`p.${part}`);
@@ -81,8 +81,11 @@ export async function exposureOf(db: DataSource, party: Party): Promise<Exposure
   };
 }
 
+/** A party as other features see it. */
+export type FoundParty = Party;
+
 /** A party by its number, as people say it: `118` or `C 118`. */
-export async function partyByNumber(db: DataSource, number: string): Promise<Party> {
+export async function partyByNumber(db: DataSource, number: string): Promise<FoundParty> {
   const bare = number.replace(/^C\s*/i, '');
   const party = /^\d{1,12}$/.test(bare)
     ? await db.getRepository(Party).findOneBy({ number: bare })
@@ -181,7 +184,7 @@ export async function addParty(req: Request, ctx: Context): Promise<Answer> {
       `INSERT INTO party (number, ${names.map((name) => COLUMNS[name]).join(', ')}) VALUES (take_customer_number(), ${names.map((_, i) => `$${i + 1}`).join(', ')}) RETURNING id, number`,
       names.map((name) => values[name]),
     );
-    await audit(tx, ctx, 'party added', row?.number ?? '', request);
+    await audit(tx, ctx, { action: 'party added', number: row?.number ?? '', detail: request });
     return { status: 201, body: { number: row?.number } };
   });
 }
@@ -201,7 +204,7 @@ export async function changeParty(req: Request, ctx: Context): Promise<Answer> {
       [party.id, version, ...names.map((name) => request[name])],
     );
     if (count === 0) throw changedMeanwhile(await tx.findOneBy(Party, { id: party.id }));
-    await audit(tx, ctx, 'party changed', party.number, request);
+    await audit(tx, ctx, { action: 'party changed', number: party.number, detail: request });
   });
   return { body: { version: version + 1 } };
 }
@@ -243,13 +246,13 @@ function refuseLimits(request: ChangePartyRequest, { person }: Context): void {
   }
 }
 
-const audit = (
-  tx: EntityManager,
-  { person }: Context,
-  action: string,
-  number: string,
-  detail: object,
-) =>
+interface Trail {
+  action: string;
+  number: string;
+  detail: object;
+}
+
+const audit = (tx: EntityManager, { person }: Context, { action, number, detail }: Trail) =>
   tx.query('INSERT INTO audit (person_id, action, subject, detail) VALUES ($1, $2, $3, $4)', [
     person.id,
     action,

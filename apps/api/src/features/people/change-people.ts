@@ -19,7 +19,11 @@ export async function addPerson(req: Request, { db, person }: Context): Promise<
       `INSERT INTO person (name, email, roles, password_hash, must_change_password, party_id) VALUES ($1, $2, $3, $4, true, $5) RETURNING id`,
       [request.name.trim(), request.email, request.roles, hash, partyId],
     );
-    await audit(tx, person.id, 'person added', row?.id ?? '', { roles: request.roles });
+    await audit(tx, person.id, {
+      action: 'person added',
+      subject: row?.id ?? '',
+      detail: { roles: request.roles },
+    });
     return { status: 201, body: { id: row?.id } };
   });
 }
@@ -63,7 +67,7 @@ export async function changePerson(req: Request, { db, person }: Context): Promi
       [id, roles, request.seesCost ?? found.seesCost, isActive],
     );
     await tx.query(`DELETE FROM session WHERE sess ->> 'personId' = $1`, [id]);
-    await audit(tx, person.id, 'person changed', id, { ...request });
+    await audit(tx, person.id, { action: 'person changed', subject: id, detail: { ...request } });
   });
   return { status: 204 };
 }
@@ -79,7 +83,11 @@ async function otherOwners(tx: EntityManager, id: string): Promise<number> {
 /** Ends every session of a person of the house. */
 export async function signOutPerson(req: Request, { db, person }: Context): Promise<Answer> {
   await endSessionsOf(db, String(req.params.id));
-  await audit(db.manager, person.id, 'signed out everywhere', String(req.params.id), {});
+  await audit(db.manager, person.id, {
+    action: 'signed out everywhere',
+    subject: String(req.params.id),
+    detail: {},
+  });
   return { status: 204 };
 }
 
@@ -97,7 +105,13 @@ export function rowOf(person: Person) {
   };
 }
 
-const audit = (tx: EntityManager, by: string, action: string, subject: string, detail: object) =>
+interface Trail {
+  action: string;
+  subject: string;
+  detail: object;
+}
+
+const audit = (tx: EntityManager, by: string, { action, subject, detail }: Trail) =>
   tx.query('INSERT INTO audit (person_id, action, subject, detail) VALUES ($1, $2, $3, $4)', [
     by,
     action,

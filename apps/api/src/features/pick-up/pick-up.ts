@@ -2,15 +2,14 @@ import type { PickUpAnswer, PickUpHit } from '@foldwell/contracts';
 import { readMark } from '@foldwell/quantities';
 import type { Request } from 'express';
 
+import { queryText } from '../../http/body.js';
 import { type Answer, type Context, type Route, STAFF } from '../../http/route.js';
 
 const MOST_HITS = 8;
 
 /** The field in the band: a lot, memo, customer or report by number, scan or name; late and differing first. */
 async function pickUp(req: Request, { db }: Context): Promise<Answer> {
-  const typed = String(req.query.q ?? '')
-    .trim()
-    .slice(0, 80);
+  const typed = queryText(req, 'q').slice(0, 80);
   if (typed === '') return { body: { hits: [], opens: null } satisfies PickUpAnswer };
   const mark = readMark(typed);
   const like = `${typed.replace(/[%_\\]/g, '\\$&')}%`;

@@ -25,6 +25,16 @@ async function listPlaces(_req: Request, { db }: Context): Promise<Answer> {
   return { body };
 }
 
+function refuseWithoutHolder(
+  kind: string,
+  ids: { party: string | null; person: string | null } | undefined,
+): void {
+  if (kind === 'person' && !ids?.person)
+    throw new RuleBroken('person_missing', 'Say which of us carries them.');
+  if (['laboratory', 'workshop'].includes(kind) && !ids?.party)
+    throw new RuleBroken('party_missing', 'Say which laboratory or workshop it is, by number.');
+}
+
 async function addPlace(req: Request, { db, person }: Context): Promise<Answer> {
   const {
     kind,
@@ -38,10 +48,7 @@ async function addPlace(req: Request, { db, person }: Context): Promise<Answer> 
     'SELECT (SELECT id FROM party WHERE number::text = $1) AS party, (SELECT id FROM person WHERE id::text = $2) AS person',
     [party ?? '', carrier ?? ''],
   );
-  if (kind === 'person' && !ids?.person)
-    throw new RuleBroken('person_missing', 'Say which of us carries them.');
-  if (['laboratory', 'workshop'].includes(kind) && !ids?.party)
-    throw new RuleBroken('party_missing', 'Say which laboratory or workshop it is, by number.');
+  refuseWithoutHolder(kind, ids);
   const [row] = await db.query<{ id: string }[]>(
     'INSERT INTO place (kind, name, safe, purpose, party_id, person_id) VALUES ($1, $2, $3, $4, $5, $6) RETURNING id',
     [

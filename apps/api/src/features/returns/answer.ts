@@ -89,32 +89,54 @@ const SHORT = ['short', 'pieces short', 'not found'];
 
 /** Which answers fit which difference, and what each posts. */
 function actOf(difference: Difference, word: AnswerRequest['answer']): Act {
+  const act = SHORT.includes(difference.kind)
+    ? shortAct(difference, word)
+    : otherAct(difference, word);
+  if (act) return act;
+  const named = difference.kind === 'excess' ? 'an excess' : `“${difference.kind}”`;
+  throw new RuleBroken('answer_fits', `“${word}” is not an answer to ${named}.`);
+}
+
+const kind = 'difference answered';
+
+/** What is short lies in missing; each answer says where it goes from there. */
+function shortAct(difference: Difference, word: AnswerRequest['answer']): Act | null {
   const held = heldBy(difference);
-  const kind = 'difference answered';
-  const isShort = SHORT.includes(difference.kind);
-  if (isShort && word === 'customer keeps it' && held.line)
-    return { kind, ...keepsItToo(held, held.line), keeps: [keepOf(difference, held)] };
-  if (isShort && word === 'accepted') return { kind, ...acceptedLegs(difference, held) };
-  if (isShort && word === 'found again')
-    return { kind, ...foundAgain(held, { kind: 'return desk' }) };
-  if (isShort && word === 'record corrected')
-    return { kind, ...recordCorrected(held, { kind: 'return desk' }) };
-  if (isShort && word === 'written off') return { kind, ...writeOffMissing(held) };
+  switch (word) {
+    case 'customer keeps it':
+      if (!held.line) return null;
+      return { kind, ...keepsItToo(held, held.line), keeps: [keepOf(difference, held)] };
+    case 'accepted':
+      return { kind, ...acceptedLegs(difference, held) };
+    case 'found again':
+      return { kind, ...foundAgain(held, { kind: 'return desk' }) };
+    case 'record corrected':
+      return { kind, ...recordCorrected(held, { kind: 'return desk' }) };
+    case 'written off':
+      return { kind, ...writeOffMissing(held) };
+    default:
+      return null;
+  }
+}
+
+/** An excess or a stone in quarantine holds nothing in missing; some answers post nothing. */
+function otherAct(difference: Difference, word: AnswerRequest['answer']): Act | null {
   const change = Number(difference.found_weight) - Number(difference.expected_weight);
   const lot = { id: Number(difference.lot_id) };
-  if (difference.kind === 'excess' && word === 'our short weighing')
-    return { kind, ...ourShortWeighing(lot, { weight: change, pieces: 0 }) };
-  if (difference.kind === 'excess' && word === 'their short weighing')
-    return theirExcess(difference, change);
-  if (difference.kind === 'other weight' && word === 'accepted')
-    return { kind, ...acceptOtherWeight(lot, { kind: 'quarantine' }, change) };
-  if (difference.kind === 'other weight' && word === 'found again') return { kind: null };
-  if (difference.kind === 'suspected switch' && ['other stone', 'found again'].includes(word))
-    return { kind: null };
-  throw new RuleBroken(
-    'answer_fits',
-    `“${word}” is not an answer to ${difference.kind === 'excess' ? 'an excess' : `“${difference.kind}”`}.`,
-  );
+  switch (`${difference.kind}: ${word}`) {
+    case 'excess: our short weighing':
+      return { kind, ...ourShortWeighing(lot, { weight: change, pieces: 0 }) };
+    case 'excess: their short weighing':
+      return theirExcess(difference, change);
+    case 'other weight: accepted':
+      return { kind, ...acceptOtherWeight(lot, { kind: 'quarantine' }, change) };
+    case 'other weight: found again':
+    case 'suspected switch: other stone':
+    case 'suspected switch: found again':
+      return { kind: null };
+    default:
+      return null;
+  }
 }
 
 /** The cost goes back to the rest of the lot, also where that lies on a memo. */

@@ -1,15 +1,15 @@
 import { WeighAgainRequest, WeighBackRequest, type WeighedBack } from '@foldwell/contracts';
-import { bringBack, bringBackRestated, type Legs, miss, together } from '@foldwell/ledger';
 import { formatCarats, formatPoints } from '@foldwell/quantities';
 import type { Request } from 'express';
 
 import { readBody } from '../../http/body.js';
 import { RuleBroken, ValidationFailed } from '../../http/errors.js';
 import type { Answer, Context } from '../../http/route.js';
-import type { Act, NewDifference } from '../ledger/act.js';
 import { type Key, keyOf, postAct } from '../ledger/post-act.js';
 import { findMemo, lineOf } from '../memos/amend-memo.js';
 import { type Expected, judgeReading, type Judged } from './judge-reading.js';
+import { returnAct } from './return-act.js';
+import type { FoundLine } from './weighed.js';
 
 /** One Enter at the desk: reads, judges, posts; asks first where number or weight of a stone disagree. */
 export async function weighBack(req: Request, ctx: Context): Promise<Answer> {
@@ -17,8 +17,6 @@ export async function weighBack(req: Request, ctx: Context): Promise<Answer> {
   const body = await weighBackLine(ctx, keyOf(req, ctx), String(req.params.number), request);
   return { status: body.outcome === 'asks' ? 200 : 201, body };
 }
-
-type FoundLine = Awaited<ReturnType<typeof findMemo>>['lines'][number];
 
 /** The act itself, as people and the demo house do it. */
 export async function weighBackLine(
@@ -53,164 +51,12 @@ export async function weighBackLine(
   const written = await postAct(ctx, key, {
     memoId: memo.id,
     businessDate: request.businessDate,
-    ...(await actOf(ctx, memo.id, line, request, judged)),
+    ...(await returnAct(ctx, { memoId: memo.id, line, request, judged })),
   });
   return {
     weighing: written.weighings[0] ?? 0,
     outcome: judged.outcome,
     says: says(line, request, judged),
-  };
-}
-
-/** The act that an outcome posts. */
-async function actOf(
-  ctx: Context,
-  memoId: number,
-  line: FoundLine,
-  request: WeighBackRequest,
-  judged: Judged,
-): Promise<Act> {
-  const { lot } = line.line;
-  const out = { weight: line.flows.out, pieces: line.outPieces };
-  const desk = { kind: 'return desk' } as const;
-  const reading = (ref?: string): Act['weighings'] => [
-    {
-      lot,
-      purpose: 'return',
-      weight: request.weight,
-      pieces: request.pieces ?? judged.pieces,
-      reportRead: request.reportRead,
-      lineId: line.line.lineId,
-      ...(ref && { difference: { new: ref } }),
-    },
-  ];
-  const difference = (
-    kind: NewDifference['kind'],
-    more: Partial<NewDifference> = {},
-  ): NewDifference[] => [
-    {
-      ref: 'd',
-      lot,
-      lineId: line.line.lineId,
-      kind,
-      expectedWeight: out.weight,
-      foundWeight: request.weight,
-      expectedPieces: out.pieces,
-      foundPieces: judged.pieces,
-      ...more,
-    },
-  ];
-  switch (judged.outcome) {
-    case 'agrees':
-      return { kind: 'memo return', ...bringBack(line.line, desk, out), weighings: reading() };
-    case 'restated':
-      return {
-        kind: 'memo return',
-        ...bringBackRestated(line.line, desk, out, { weight: request.weight, pieces: out.pieces }),
-        weighings: reading(),
-      };
-    case 'excess':
-      // What was expected is back; what is over lies in quarantine, unposted, until somebody answers.
-      return {
-        kind: 'memo return',
-        ...bringBack(line.line, desk, out),
-        newDifferences: difference('excess'),
-        weighings: reading('d'),
-      };
-    case 'short':
-    case 'pieces short':
-      return {
-        kind: 'memo return',
-        ...shortLegs(line, request, judged),
-        newDifferences: difference(judged.outcome),
-        weighings: reading('d'),
-      };
-    case 'not found':
-      return {
-        kind: 'difference opened',
-        ...miss(line.line, { new: 'd' }, out),
-        newDifferences: difference('not found'),
-        weighings: reading('d'),
-      };
-    case 'other weight':
-      return {
-        kind: 'memo return',
-        ...bringBack(line.line, { kind: 'quarantine' }, out),
-        newDifferences: difference('other weight'),
-        weighings: reading('d'),
-      };
-    default:
-      return switchAct(ctx, memoId, line, request, difference);
-  }
-}
-
-function shortLegs(line: FoundLine, request: WeighBackRequest, judged: Judged): Legs {
-  const [out, outPieces] = [line.flows.out, line.outPieces];
-  const back = { weight: Math.min(request.weight, out), pieces: judged.pieces };
-  const gone = { weight: out - back.weight, pieces: outPieces - back.pieces };
-  return together(
-    ...(back.weight > 0 ? [bringBack(line.line, { kind: 'return desk' }, back)] : []),
-    miss(line.line, { new: 'd' }, gone),
-  );
-}
-
-/** Ours stays on the memo; what came is a new lot of that party's, without cost, in quarantine. */
-async function switchAct(
-  { db }: Context,
-  memoId: number,
-  line: FoundLine,
-  request: WeighBackRequest,
-  difference: (kind: string, more: Partial<NewDifference>) => NewDifference[],
-): Promise<Act> {
-  const [party] = await db.query<{ id: string; name: string }[]>(
-    'SELECT y.id, y.name FROM party y JOIN memo m ON m.party_id = y.id WHERE m.id = $1',
-    [memoId],
-  );
-  const came = { new: 'came' };
-  const quantity = { weight: request.weight, pieces: 1 };
-  return {
-    kind: 'consignment in',
-    partyId: party?.id,
-    paper: `came for ${line.lot}`,
-    newPlaces: [
-      { ref: 'theirs', kind: 'memo in', name: `Came for ${line.lot}`, partyId: party?.id ?? '' },
-    ],
-    newLots: [
-      {
-        ref: 'came',
-        kind: 'stone',
-        fixed_pieces: 1,
-        origin: 'not tested',
-        owner_party_id: party?.id,
-        source_party_id: party?.id,
-        particulars: {
-          comments: `Came back for ${line.lot}; suspected, not proven.`,
-          ...(request.reportRead && { inscription: request.reportRead }),
-        },
-      },
-    ],
-    legs: [
-      {
-        lot: came,
-        place: { new: 'theirs' },
-        weight: -quantity.weight,
-        pieces: -1,
-        cost: { how: 'none' },
-      },
-      { lot: came, place: { kind: 'quarantine' }, ...quantity, cost: { how: 'none' } },
-    ],
-    pools: [],
-    newDifferences: difference('suspected switch', { cameLot: came, foundPieces: 1 }),
-    weighings: [
-      {
-        lot: came,
-        purpose: 'return',
-        weight: request.weight,
-        pieces: 1,
-        reportRead: request.reportRead,
-        difference: { new: 'd' },
-      },
-    ],
   };
 }
 

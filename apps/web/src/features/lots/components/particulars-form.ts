@@ -69,7 +69,6 @@ const mm = (value: number | null | undefined) => (value ? (value / 1000).toStrin
 export function particularsForm(from: ParticularsRequest, currency: string): ParticularsForm {
   const plain = (amount: number | null | undefined) =>
     amount == null ? '' : formatAmount(amount, currency, true).replaceAll(',', '');
-  const { proportions = {} } = from;
   return {
     shape: from.shape ?? '',
     sieve: [from.sieveFrom && `+${from.sieveFrom}`, from.sieveTo && `-${from.sieveTo}`]
@@ -89,10 +88,7 @@ export function particularsForm(from: ParticularsRequest, currency: string): Par
     measures: [mm(from.measureA), mm(from.measureB), mm(from.measureDepth)]
       .filter(Boolean)
       .join(' x '),
-    depth: String(proportions.depth ?? ''),
-    table: String(proportions.table ?? ''),
-    crownAngle: String(proportions.crownAngle ?? ''),
-    pavilionAngle: String(proportions.pavilionAngle ?? ''),
+    ...proportionsForm(from.proportions),
     laboratory: from.reportLaboratory ?? '',
     report: from.reportNumber ?? '',
     stated: from.statedWeight ? (from.statedWeight / 1000).toFixed(2) : '',
@@ -102,6 +98,16 @@ export function particularsForm(from: ParticularsRequest, currency: string): Par
     comments: from.comments ?? '',
     ask: plain(from.ask),
     floor: plain(from.floor),
+  };
+}
+
+function proportionsForm(proportions: ParticularsRequest['proportions'] = {}) {
+  const { depth = '', table = '', crownAngle = '', pavilionAngle = '' } = proportions;
+  return {
+    depth: String(depth),
+    table: String(table),
+    crownAngle: String(crownAngle),
+    pavilionAngle: String(pavilionAngle),
   };
 }
 

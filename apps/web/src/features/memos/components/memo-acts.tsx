@@ -127,7 +127,7 @@ function ActForm({
       onDone();
       if (act === 'transfer' && answer.number) void navigate(`/memos/${answer.number}?booked=1`);
     } catch (problem) {
-      nextKey();
+      nextKey(problem);
       setError(problem);
     }
   };

@@ -1,22 +1,23 @@
-import type { BookedMemo, House, PartyRow, ReadLine } from '@foldwell/contracts';
+import type { House, PartyRow } from '@foldwell/contracts';
 import { addDays, formatCarats, formatMoney } from '@foldwell/quantities';
-import { useQuery, useQueryClient } from '@tanstack/react-query';
-import { useEffect, useRef, useState } from 'react';
+import { useQuery } from '@tanstack/react-query';
+import { useRef, useState } from 'react';
 import { useNavigate, useParams, useSearchParams } from 'react-router-dom';
 
 import { BalanceBar } from '../../../components/balance-bar';
-import { Choice, Field } from '../../../components/field';
 import { Refused } from '../../../components/refused';
 import { api } from '../../../lib/api-client';
-import { useBookingKey } from '../../../lib/kept';
 import { useKeys } from '../../../lib/keys';
 import { useMay, useMe } from '../../../lib/session';
 import { DraftLines } from './draft-lines';
 import { ExposurePanel, usePreview } from './exposure-panel';
-import { linesToBook } from './memo-draft';
+import { MemoHead } from './memo-head';
 import { OnThePaper } from './on-the-paper';
+import { readiness } from './readiness';
 import { ScanLine, type ScanLineHandle } from './scan-line';
+import { useBookMemo } from './use-book-memo';
 import { useMemoDraft } from './use-memo-draft';
+import { useStart } from './use-start';
 
 /** Book stones out: scan, carats, price; exposure grows as you write; Ctrl Enter books. */
 export function WriteMemoPage() {
@@ -26,12 +27,9 @@ export function WriteMemoPage() {
   const mayWrite = useMay('owner', 'dealer');
   const isOwner = useMay('owner');
   const navigate = useNavigate();
-  const client = useQueryClient();
   const { draft, change, state, keepNow, forget, isReady } = useMemoDraft(openId);
   const scan = useRef<ScanLineHandle>(null);
-  const [error, setError] = useState<unknown>();
   const [reason, setReason] = useState('');
-  const [key, nextKey] = useBookingKey();
   const customers = useQuery({
     queryKey: ['parties', 'customer'],
     queryFn: () => api<PartyRow[]>('/parties?part=customer'),
@@ -42,59 +40,13 @@ export function WriteMemoPage() {
     customers.data?.find((one) => one.number === draft.party)?.exposure.currency ??
     house.priceCurrency;
   const preview = usePreview(draft, due);
-  useStart(
-    search,
-    isReady,
-    draft.lines.map((line) => line.lot),
-    draft.party,
-    change,
-  );
+  useStart(search, isReady, draft, change);
 
-  const isOver = Boolean(
-    preview && (preview.overBy > 0 || preview.overMemoBy > 0 || preview.lapsed),
-  );
-  const cannot =
-    draft.party === ''
-      ? 'Choose the customer first.'
-      : draft.lines.length === 0
-        ? 'Add a line first.'
-        : draft.lines.some((line) => line.price === null && line.sum === null)
-          ? 'A line has no price yet; type its lot with @ and the price.'
-          : isOver && !isOwner
-            ? `Book out waits for ${preview?.owners[0] ?? 'an owner'}.`
-            : isOver && reason.trim() === ''
-              ? 'Write why it may pass; that is your release.'
-              : null;
-  const book = async () => {
-    if (cannot && !(isOver && !isOwner)) return;
-    setError(undefined);
-    try {
-      const draftId = await keepNow();
-      const { handedTo, carriedBy, terms, remarks, party, pricesUntil, lines } = draft;
-      const booked = await api<BookedMemo>('/memos', {
-        method: 'POST',
-        key,
-        body: {
-          party,
-          due,
-          handedTo,
-          carriedBy,
-          terms,
-          remarks,
-          ...(pricesUntil && { pricesUntil }),
-          ...(draftId && { draftId }),
-          ...(reason && { releaseReason: reason }),
-          lines: linesToBook(lines),
-        },
-      });
-      nextKey();
-      forget();
-      await client.invalidateQueries();
-      void navigate(`/memos/${booked.number}?booked=1`);
-    } catch (problem) {
-      nextKey();
-      setError(problem);
-    }
+  const { isOver, cannot } = readiness(draft, preview, { isOwner, reason });
+  const mustAsk = isOver && !isOwner;
+  const { error, book } = useBookMemo({ draft, due, reason, keepNow, forget });
+  const tryToBook = () => {
+    if (!cannot || mustAsk) void book();
   };
   const putAside = () =>
     void keepNow().then(() => {
@@ -106,8 +58,8 @@ export function WriteMemoPage() {
       { key: 'Enter', says: 'add line', act: () => scan.current?.focus() },
       {
         key: 'Ctrl Enter',
-        says: isOver && !isOwner ? 'ask the owner' : 'book out',
-        act: () => void book(),
+        says: mustAsk ? 'ask the owner' : 'book out',
+        act: tryToBook,
         inFields: true,
       },
       {
@@ -137,53 +89,13 @@ export function WriteMemoPage() {
           </button>
         </div>
       </div>
-      <section className="flex flex-wrap gap-3 px-6 pb-3 border-b border-crease-2">
-        <Choice
-          label="Customer"
-          value={draft.party}
-          onValue={(party) => change({ party })}
-          className="w-[250px]"
-          options={[
-            ['', 'choose'],
-            ...(customers.data ?? []).map(
-              (one) => [one.number, `${one.name}, C ${one.number}`] as const,
-            ),
-          ]}
-        />
-        <Field
-          label="Handed to"
-          value={draft.handedTo}
-          onValue={(handedTo) => change({ handedTo })}
-          className="w-[150px]"
-        />
-        <Field
-          label="Terms"
-          value={draft.terms}
-          onValue={(terms) => change({ terms })}
-          className="w-[180px]"
-          placeholder={`${rules.data?.memoDays ?? 14} days`}
-        />
-        <Field
-          label="Due back"
-          type="date"
-          value={due}
-          onValue={(value) => change({ due: value })}
-          className="w-[150px]"
-        />
-        <Field
-          label="Prices held until"
-          type="date"
-          value={draft.pricesUntil || due}
-          onValue={(pricesUntil) => change({ pricesUntil })}
-          className="w-[150px]"
-        />
-        <Field
-          label="Carried by"
-          value={draft.carriedBy}
-          onValue={(carriedBy) => change({ carriedBy })}
-          className="grow min-w-[160px]"
-        />
-      </section>
+      <MemoHead
+        draft={draft}
+        change={change}
+        due={due}
+        days={rules.data?.memoDays ?? 14}
+        customers={customers.data ?? []}
+      />
       <section className="grid lg:grid-cols-[minmax(0,1fr)_440px] lg:flex-1 lg:min-h-0">
         <div className="min-w-0 flex flex-col gap-3 lg:overflow-auto max-lg:overflow-x-auto pb-4">
           <DraftLines
@@ -227,10 +139,10 @@ export function WriteMemoPage() {
         <button
           type="button"
           className="btn primary"
-          disabled={Boolean(cannot) && !(isOver && !isOwner)}
-          onClick={() => void book()}
+          disabled={Boolean(cannot) && !mustAsk}
+          onClick={tryToBook}
         >
-          {isOver && !isOwner
+          {mustAsk
             ? `Ask ${preview?.owners[0] ?? 'the owner'}`
             : `Book out ${formatCarats(weight)} ct`}{' '}
           <kbd>Ctrl Enter</kbd>
@@ -238,34 +150,4 @@ export function WriteMemoPage() {
       </section>
     </>
   );
-}
-
-/** A memo begun from a selection of lots or from a customer's page. */
-function useStart(
-  search: URLSearchParams,
-  isReady: boolean,
-  has: string[],
-  party: string,
-  change: (part: { party?: string; lines?: never[] } & Record<string, unknown>) => void,
-): void {
-  const done = useRef(false);
-  useEffect(() => {
-    if (done.current || !isReady) return;
-    done.current = true;
-    const wanted = search.get('party');
-    if (wanted && !party) change({ party: wanted });
-    const lots = (search.get('lots') ?? '').split(',').filter((lot) => lot && !has.includes(lot));
-    if (lots.length === 0) return;
-    void (async () => {
-      const lines: NonNullable<ReadLine['line']>[] = [];
-      for (const text of lots) {
-        const read = await api<ReadLine>('/memo-lines/read', {
-          method: 'POST',
-          body: { text, party: wanted ?? party, lines: [] },
-        });
-        if (read.line) lines.push(read.line);
-      }
-      if (lines.length > 0) change({ lines: lines as never[] });
-    })();
-  }, [search, isReady, has, party, change]);
 }

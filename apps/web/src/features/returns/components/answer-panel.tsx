@@ -70,7 +70,7 @@ export function AnswerPanel({ difference, onDone }: { difference: DifferenceRow;
       nextKey();
       onDone();
     } catch (problem) {
-      nextKey();
+      nextKey(problem);
       setError(problem);
     }
   };

@@ -132,7 +132,7 @@ function PutAway({ desk }: { desk: ReturnsList['desk'] }) {
       setPicked(new Set());
       await client.invalidateQueries();
     } catch (problem) {
-      nextKey();
+      nextKey(problem);
       setError(problem);
     }
   };

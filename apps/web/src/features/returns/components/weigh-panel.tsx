@@ -72,7 +72,7 @@ export function WeighPanel({
       setAsks(null);
       onDone(outcome);
     } catch (refusal) {
-      nextKey();
+      nextKey(refusal);
       setError(refusal);
     }
   };
@@ -86,7 +86,7 @@ export function WeighPanel({
       nextKey();
       await client.invalidateQueries();
     } catch (refusal) {
-      nextKey();
+      nextKey(refusal);
       setError(refusal);
     }
   };

@@ -1,0 +1,15 @@
+import type { WeighBackRequest } from '@foldwell/contracts';
+
+import type { findMemo } from '../memos/amend-memo.js';
+import type { Judged } from './judge-reading.js';
+
+/** A line of a memo as the ledger names it. */
+export type FoundLine = Awaited<ReturnType<typeof findMemo>>['lines'][number];
+
+/** A reading of one line and what it was judged to mean. */
+export interface Weighed {
+  memoId: number;
+  line: FoundLine;
+  request: WeighBackRequest;
+  judged: Judged;
+}
