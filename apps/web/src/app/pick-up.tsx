@@ -47,7 +47,7 @@ export function PickUp({ ref }: { ref: Ref<PickUpHandle> }) {
     event.preventDefault();
   };
   return (
-    <div className="pick-up" role="search">
+    <search className="pick-up">
       <label>
         <svg
           viewBox="0 0 16 16"
@@ -74,9 +74,9 @@ export function PickUp({ ref }: { ref: Ref<PickUpHandle> }) {
         <kbd>/</kbd>
       </label>
       {text.trim() !== '' && data && (
-        <ul role="listbox" aria-label="Found">
+        <ul aria-label="Found">
           {hits.map((hit, index) => (
-            <li key={hit.path} role="option" aria-selected={index === at}>
+            <li key={hit.path} aria-current={index === at}>
               <Link to={hit.path} tabIndex={-1} onClick={() => setText('')}>
                 <b>
                   {hit.kind === 'memo'
@@ -97,6 +97,6 @@ export function PickUp({ ref }: { ref: Ref<PickUpHandle> }) {
           )}
         </ul>
       )}
-    </div>
+    </search>
   );
 }

@@ -84,8 +84,9 @@ function Band({ pickUp }: { pickUp: React.RefObject<PickUpHandle | null> }) {
               {rest}
             </span>
             {path === '/returns' && open > 0 && (
-              <span className="count" aria-label={`${open} to answer`}>
+              <span className="count">
                 {open}
+                <span className="sr-only"> to answer</span>
               </span>
             )}
           </NavLink>

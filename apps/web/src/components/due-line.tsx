@@ -1,5 +1,4 @@
 import { daysBetween, addDays, shortDate } from '@foldwell/quantities';
-import { useNavigate } from 'react-router-dom';
 
 interface Due {
   number: string;
@@ -17,7 +16,6 @@ const isRoom = (day: number, next: number | undefined) =>
 
 /** Memos by due date around today: height is value out, red is late; further ones stand at the ends. */
 export function DueLine({ memos, today }: { memos: Due[]; today: string }) {
-  const navigate = useNavigate();
   const most = Math.max(1, ...memos.map((memo) => memo.value));
   const byDay = new Map<number, Due[]>();
   for (const memo of memos) {
@@ -68,11 +66,7 @@ export function DueLine({ memos, today }: { memos: Due[]; today: string }) {
             const height = 8 + (38 * memo.value) / most;
             const x = at(day) - 5 + index * 13 + (day === 0 ? 8 : 0);
             return (
-              <g
-                key={memo.number}
-                onClick={() => void navigate(`/memos/${memo.number}`)}
-                style={{ cursor: 'pointer' }}
-              >
+              <g key={memo.number}>
                 <rect
                   x={x}
                   y={66 - height}

@@ -1,5 +1,6 @@
 import { formatPoints } from '@foldwell/quantities';
 
+const TICKS = Array.from({ length: 21 }, (_, index) => index);
 const WIDTH = 132;
 const HALF = 60;
 
@@ -28,7 +29,7 @@ export function Needle({ off, tolerance }: { off: number; tolerance: number }) {
         y="8"
         height="10"
       />
-      {Array.from({ length: 21 }, (_, index) => (
+      {TICKS.map((index) => (
         <line
           key={index}
           className="tick"

@@ -11,7 +11,8 @@ export function useCurrentRow(count: number): {
   const body = useRef<HTMLTableSectionElement>(null);
   const setCurrent = (row: number) => setRow(Math.max(0, Math.min(count - 1, row)));
   useEffect(() => {
-    body.current?.querySelector('tr.current')?.scrollIntoView({ block: 'nearest' });
+    if (current >= 0)
+      body.current?.querySelector('tr.current')?.scrollIntoView({ block: 'nearest' });
   }, [current]);
   const silent = (key: string, row: () => number) => ({
     key,

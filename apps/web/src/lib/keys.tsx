@@ -156,15 +156,15 @@ export function useKeys(keys: ScreenKey[], state = ''): void {
   const context = useContext(KeysContext);
   const latest = useRef(keys);
   latest.current = keys;
-  const names = keys.map((key) => `${key.key} ${key.says}`).join('|');
   const setKeys = context?.setKeys;
   const setState = context?.setState;
+  // Told again only when a key or its word changes; what it does is always the newest.
+  const told = JSON.stringify(keys.map(({ key, says, inFields }) => ({ key, says, inFields })));
   useEffect(() => {
-    setKeys?.(
-      latest.current.map((key, index) => ({ ...key, act: () => latest.current[index]?.act() })),
-    );
+    const named = JSON.parse(told) as Omit<ScreenKey, 'act'>[];
+    setKeys?.(named.map((key, index) => ({ ...key, act: () => latest.current[index]?.act() })));
     return () => setKeys?.([]);
-  }, [names, setKeys]);
+  }, [told, setKeys]);
   useEffect(() => {
     setState?.(state);
   }, [state, setState]);

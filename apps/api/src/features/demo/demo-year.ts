@@ -26,6 +26,11 @@ export class DemoYear {
     readonly today: string,
   ) {}
 
+  #next(): number {
+    this.#serial += 1;
+    return this.#serial;
+  }
+
   #key(personId: string): Key {
     this.#acts += 1;
     return { personId, key: `demo-act-${String(this.#acts).padStart(9, '0')}`, hash: 'demo' };
@@ -48,7 +53,7 @@ export class DemoYear {
       makeLot(
         this.dice,
         this.dice.pick(this.house.drawers),
-        (this.#serial += 1),
+        this.#next(),
         how !== 'consignment in',
       ),
     );
@@ -253,7 +258,7 @@ export class DemoYear {
     for (const [index, line] of lines.entries()) {
       await weighBackLine(desk, this.#key(desk.person.id), line.number, {
         lot: line.lot,
-        weight: Number(line.out) - [80, 30, 50][index % 3]!,
+        weight: Number(line.out) - ([80, 30, 50][index % 3] ?? 0),
         businessDate: this.today,
       });
     }

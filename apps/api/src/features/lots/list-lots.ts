@@ -94,7 +94,7 @@ async function hintOf(req: Request, { db }: Context): Promise<string | null> {
   const tries: [string, Request['query']][] = [];
   if (typeof clarity === 'string' && clarity) {
     const [from = '', to = from] = clarity.split('-');
-    const wider = CLARITIES[CLARITIES.findIndex((grade) => grade === to.toUpperCase()) + 1];
+    const wider = CLARITIES[(CLARITIES as readonly string[]).indexOf(to.toUpperCase()) + 1];
     if (wider)
       tries.push([`if clarity went to ${wider}`, { ...req.query, clarity: `${from}-${wider}` }]);
   }

@@ -50,7 +50,7 @@ export function LotHistory({ lot, onUndo }: { lot: LotDetail; onUndo: (() => voi
           </tr>
         </thead>
         <tbody>
-          {lot.history.map((entry, index) => {
+          {lot.history.map((entry) => {
             const whole =
               entry.after.safe +
               entry.after.out +
@@ -58,7 +58,7 @@ export function LotHistory({ lot, onUndo }: { lot: LotDetail; onUndo: (() => voi
               entry.after.sold +
               entry.after.missing;
             return (
-              <tr key={`${entry.at}${index}`}>
+              <tr key={`${entry.at} ${entry.what}`}>
                 <td title={longDate(entry.date)}>{shortDate(entry.date, today)}</td>
                 <td className="soft">{entry.who}</td>
                 <td>{entry.what}</td>

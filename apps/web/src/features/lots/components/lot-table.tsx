@@ -101,7 +101,7 @@ export function LotTable(props: Props) {
         </thead>
         <tbody ref={props.table.body}>
           {before > 0 && (
-            <tr aria-hidden="true">
+            <tr>
               <td colSpan={15} style={{ height: before, padding: 0 }} />
             </tr>
           )}
@@ -112,7 +112,7 @@ export function LotTable(props: Props) {
               ),
           )}
           {after > 0 && (
-            <tr aria-hidden="true">
+            <tr>
               <td colSpan={15} style={{ height: after, padding: 0 }} />
             </tr>
           )}

@@ -65,8 +65,8 @@ export function MoveLot({
         {
           lot: lot.row.number,
           from,
-          weight: carats.value as number,
-          pieces: count.value as number,
+          weight: carats.value,
+          pieces: count.value,
         },
       ];
       await api(isDesk ? '/put-away' : '/transfers', {

@@ -63,6 +63,7 @@ export const EMPTY_PARTICULARS: ParticularsForm = {
 };
 
 const mark = (rank: number | null | undefined) => (rank ? (MAKE_MARKS[rank - 1] ?? '') : '');
+const words = (text: string | undefined) => text ?? '';
 const mm = (value: number | null | undefined) => (value ? (value / 1000).toString() : '');
 
 /** What is written now, as it would be typed. */
@@ -70,7 +71,7 @@ export function particularsForm(from: ParticularsRequest, currency: string): Par
   const plain = (amount: number | null | undefined) =>
     amount == null ? '' : formatAmount(amount, currency, true).replaceAll(',', '');
   return {
-    shape: from.shape ?? '',
+    shape: words(from.shape),
     sieve: [from.sieveFrom && `+${from.sieveFrom}`, from.sieveTo && `-${from.sieveTo}`]
       .filter(Boolean)
       .join(' '),
@@ -84,18 +85,18 @@ export function particularsForm(from: ParticularsRequest, currency: string): Par
     cut: mark(from.cut),
     polish: mark(from.polish),
     symmetry: mark(from.symmetry),
-    fluorescence: from.fluorescence ?? '',
+    fluorescence: words(from.fluorescence),
     measures: [mm(from.measureA), mm(from.measureB), mm(from.measureDepth)]
       .filter(Boolean)
       .join(' x '),
     ...proportionsForm(from.proportions),
-    laboratory: from.reportLaboratory ?? '',
-    report: from.reportNumber ?? '',
+    laboratory: words(from.reportLaboratory),
+    report: words(from.reportNumber),
     stated: from.statedWeight ? (from.statedWeight / 1000).toFixed(2) : '',
-    country: from.miningCountry ?? '',
-    evidence: from.miningEvidence ?? '',
-    inscription: from.inscription ?? '',
-    comments: from.comments ?? '',
+    country: words(from.miningCountry),
+    evidence: words(from.miningEvidence),
+    inscription: words(from.inscription),
+    comments: words(from.comments),
     ask: plain(from.ask),
     floor: plain(from.floor),
   };

@@ -147,11 +147,12 @@ function Strip({
   return (
     <div className="field">
       <span>{label}</span>
-      <div className="strip" role="group" aria-label={label}>
+      <div className="strip">
         {scale.map((grade, index) => (
           <button
             key={grade}
             type="button"
+            aria-label={`${label} ${grade}`}
             aria-pressed={first >= 0 && index >= first && index <= last}
             className={index === first || index === last ? 'end' : ''}
             onClick={() => press(grade)}

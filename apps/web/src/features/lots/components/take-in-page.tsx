@@ -73,7 +73,7 @@ export function TakeInPage() {
   );
   const text = (name: keyof Form) => ({
     value: String(form[name]),
-    onValue: (value: string) => change({ [name]: value } as Partial<Form>),
+    onValue: (value: string) => change({ [name]: value }),
     problem: problems[name],
   });
   const book = async () => {

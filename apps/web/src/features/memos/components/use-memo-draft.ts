@@ -12,19 +12,21 @@ interface Stored {
   draft: MemoDraft;
 }
 
+interface KeptDraft {
+  draft: MemoDraft;
+  change(part: Partial<MemoDraft>): void;
+  /** What is said at the right of the key line. */
+  state: string;
+  keepNow(): Promise<string | null>;
+  forget(): void;
+  isReady: boolean;
+}
+
 /**
  * A draft that is never lost: in this browser at once, in the house a moment later. Without a
  * connection it stays here and says so.
  */
-export function useMemoDraft(openId: string | undefined): {
-  draft: MemoDraft;
-  change(part: Partial<MemoDraft>): void;
-  state: string;
-  id: string | null;
-  keepNow(): Promise<string | null>;
-  forget(): void;
-  isReady: boolean;
-} {
+export function useMemoDraft(openId: string | undefined): KeptDraft {
   const [stored, setStored] = useState<Stored>(() =>
     openId ? { id: openId, version: 1, draft: EMPTY_DRAFT } : readLocal(),
   );
@@ -36,10 +38,8 @@ export function useMemoDraft(openId: string | undefined): {
 
   useEffect(() => {
     if (!openId) return;
-    void api<{ id: string; version: number; body: MemoDraft }>(`/drafts/${openId}`)
-      .then(({ id, version, body }) =>
-        setStored({ id, version, draft: { ...EMPTY_DRAFT, ...body } }),
-      )
+    void openDraft(openId)
+      .then(setStored)
       .catch((problem: unknown) => setState(problem instanceof Error ? problem.message : ''))
       .finally(() => setReady(true));
   }, [openId]);
@@ -84,7 +84,14 @@ export function useMemoDraft(openId: string | undefined): {
     localStorage.removeItem(LOCAL);
     setStored({ id: null, version: 1, draft: EMPTY_DRAFT });
   }, []);
-  return { draft: stored.draft, change, state, id: stored.id, keepNow, forget, isReady };
+  return { draft: stored.draft, change, state, keepNow, forget, isReady };
+}
+
+async function openDraft(openId: string): Promise<Stored> {
+  const { id, version, body } = await api<{ id: string; version: number; body: MemoDraft }>(
+    `/drafts/${openId}`,
+  );
+  return { id, version, draft: { ...EMPTY_DRAFT, ...body } };
 }
 
 async function send(

@@ -76,11 +76,9 @@ export function PrintSlipPage() {
                       <b>{line.lot}</b>
                     </td>
                     <td>{line.what}</td>
-                    {[line.sent, line.returned, line.kept, line.missing, line.out].map(
-                      (weight, index) => (
-                        <td key={index}>{formatCarats(weight)}</td>
-                      ),
-                    )}
+                    {(['sent', 'returned', 'kept', 'missing', 'out'] as const).map((flow) => (
+                      <td key={flow}>{formatCarats(line[flow])}</td>
+                    ))}
                     <td>{line.found === null ? '–' : formatCarats(line.found)}</td>
                     <td>{line.weighing ? `W ${line.weighing}` : '–'}</td>
                   </tr>
