@@ -90,3 +90,21 @@ describe.each(USERS.filter((user) => user === 'root'))(
     });
   },
 );
+
+describe('a demo house made by hand', () => {
+  it('is the one that the next start opens', async () => {
+    const clone = cloned('ordinary');
+    const seed = run(clone, 'seed', { args: ['--lots', '40'] });
+    expect(await seed.ended, seed.said()).toBe(0);
+    expect(seed.said()).toContain('Sign in as ');
+    const again = run(clone, 'seed');
+    expect(await again.ended).toBe(1);
+    expect(again.said()).toContain('There is a house here already.');
+    const house = run(clone, 'start');
+    await house.address();
+    expect(house.said()).not.toContain('Making');
+    expect(house.said()).toContain(seed.said().trim().split('\n').at(-1));
+    house.child.kill('SIGTERM');
+    await expectAllGone(clone, []);
+  });
+});

@@ -1,4 +1,11 @@
-import { runApiProgram } from './run-api-program.mjs';
+import { openForProgram } from './open-for-program.mjs';
+import { startProcess } from './processes/process.mjs';
+import { programArgs } from './programs.mjs';
 import { runCommand } from './run-command.mjs';
 
-runCommand(() => runApiProgram('migrate'));
+runCommand(async () => {
+  const env = await openForProgram('npm run migrate');
+  const args = [...programArgs('migrate'), ...process.argv.slice(2)];
+  const { ended } = startProcess(process.execPath, args, { env: env.migrate, stdio: 'inherit' });
+  return (await ended) ?? 1;
+});

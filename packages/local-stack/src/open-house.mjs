@@ -1,4 +1,5 @@
 import { build } from './build.mjs';
+import { makeDemo } from './make-demo.mjs';
 import { openDatabase } from './open-database.mjs';
 import { programArgs, programEnv } from './programs.mjs';
 import { runProgram } from './processes/run-program.mjs';
@@ -7,6 +8,8 @@ import { startApi, startWorker } from './start-processes.mjs';
 import { keepHouse, keptHouse } from './state/house.mjs';
 import { tellWhere } from './state/lock.mjs';
 import { secrets } from './state/secrets.mjs';
+
+/** @typedef {import('./state/house.mjs').House} House */
 
 /**
  * Everything from the database to the open door; ends when one of its processes ends.
@@ -21,7 +24,7 @@ export async function openHouse({ port, isEmpty }) {
   const worker = startWorker(env.worker);
   const api = await startApi(env.main, port);
   tellWhere({ address: api.address, databasePort: database.port });
-  say(`Foldwell is open at ${api.address}. ${house.signIns}`);
+  say(`Foldwell is open at ${api.address}. ${await welcome(api.address, house)}`);
   const ended = await Promise.race([
     api.ended.then(() => 'The API'),
     worker.ended.then(() => 'The worker'),
@@ -35,6 +38,7 @@ export async function openHouse({ port, isEmpty }) {
 /**
  * @param {boolean} isEmpty
  * @param {NodeJS.ProcessEnv} env of the program that makes the demo house
+ * @returns {Promise<House>}
  */
 async function fillHouse(isEmpty, env) {
   const kept = keptHouse();
@@ -46,20 +50,22 @@ async function fillHouse(isEmpty, env) {
     return kept;
   }
   if (isEmpty) {
-    const house = {
-      kind: /** @type {const} */ ('empty'),
-      isReady: true,
-      signIns: 'Its first page makes the first owner.',
-    };
+    /** @type {House} */
+    const house = { kind: 'empty', isReady: true, signIns: '' };
     keepHouse(house);
     return house;
   }
-  keepHouse({ kind: 'demo', isReady: false, signIns: '' });
   say('Making the demo house.');
-  const lines = (await runProgram(process.execPath, programArgs('seed'), { env }))
-    .trim()
-    .split('\n');
-  const house = { kind: /** @type {const} */ ('demo'), isReady: true, signIns: lines.at(-1) ?? '' };
-  keepHouse(house);
-  return house;
+  return makeDemo(env);
+}
+
+/**
+ * What follows the address: how to sign in.
+ * @param {string} address @param {House} house
+ */
+async function welcome(address, { kind, signIns }) {
+  if (kind === 'demo') return signIns;
+  /** @type {any} */
+  const { isEmpty } = await (await fetch(`${address}/api/first-owner`)).json();
+  return isEmpty ? 'It is empty; its first page makes the first owner.' : 'Sign in as before.';
 }

@@ -1,4 +1,11 @@
-import { runApiProgram } from './run-api-program.mjs';
+import { makeDemo } from './make-demo.mjs';
+import { openForProgram } from './open-for-program.mjs';
+import { say } from './root.mjs';
 import { runCommand } from './run-command.mjs';
 
-runCommand(() => runApiProgram('seed'));
+runCommand(async () => {
+  const env = await openForProgram('npm run seed');
+  const { signIns } = await makeDemo(env.seed, process.argv.slice(2));
+  say(signIns);
+  return 0;
+});

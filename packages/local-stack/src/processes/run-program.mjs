@@ -21,9 +21,6 @@ export async function runProgram(program, args, options = {}) {
     errors += part;
   });
   const code = await ended;
-  if (code !== 0)
-    throw new Error(
-      `${[program, ...args].join(' ').slice(0, 200)} failed.\n${errors || out}`.trimEnd(),
-    );
+  if (code !== 0) throw new Error((errors || out).trim() || `${program} failed.`);
   return out;
 }
