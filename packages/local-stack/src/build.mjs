@@ -43,10 +43,25 @@ async function buildInto(dist, folders, command) {
       env: { ...process.env, NODE_ENV: 'production' },
     });
     writeFileSync(join(next, '.inputs'), stamp);
-    rmSync(dist, { recursive: true, force: true });
-    renameSync(next, dist);
+    putInPlace(next, dist);
   } finally {
     rmSync(next, { recursive: true, force: true });
+  }
+}
+
+/**
+ * Another build of the same sources may put its own there first, which is as good.
+ * @param {string} next @param {string} dist
+ */
+function putInPlace(next, dist) {
+  const old = `${next}.old`;
+  try {
+    if (existsSync(dist)) renameSync(dist, old);
+    renameSync(next, dist);
+  } catch (error) {
+    if (!existsSync(join(dist, '.inputs'))) throw error;
+  } finally {
+    rmSync(old, { recursive: true, force: true });
   }
 }
 

@@ -115,13 +115,3 @@ function Nowhere({ parts, whole }: { parts: Parts; whole: number }) {
 export function Swatch({ part }: { part: Part }) {
   return <span className={`swatch ${part}`} aria-hidden="true" />;
 }
-
-/** A status is a piece of the bar and its word. */
-export function Status({ part, children }: { part: Part; children: ReactNode }) {
-  return (
-    <span className="status">
-      <Swatch part={part} />
-      {children}
-    </span>
-  );
-}
