@@ -58,7 +58,7 @@ describe('the layout of the repository', () => {
     const tests = files.filter((path) => /[.]test[.]tsx?$/.test(path));
     expect(tests.length).toBeGreaterThan(0);
     expect(
-      tests.filter((path) => !/\bexpect\b/.test(readFileSync(join(ROOT, path), 'utf8'))),
+      tests.filter((path) => !/\b(expect|assert)/.test(readFileSync(join(ROOT, path), 'utf8'))),
     ).toEqual([]);
   });
 });
