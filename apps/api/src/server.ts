@@ -7,6 +7,7 @@ import { Refusal } from './http/errors.js';
 import { admit, refuseForgery } from './http/guard.js';
 import { health } from './http/health.js';
 import { log } from './http/log.js';
+import { assertMatrix } from './http/matrix.js';
 import { problems, sendProblem } from './http/problem.js';
 import type { Answer, Route } from './http/route.js';
 import { securityHeaders } from './http/security-headers.js';
@@ -21,6 +22,7 @@ export interface Server {
 
 /** The whole app over a data source, not listening; tests build it the same way. */
 export function buildServer(config: Config, db: DataSource): Server {
+  assertMatrix(routes);
   const app = express();
   app.disable('x-powered-by');
   app.set('query parser', 'simple');

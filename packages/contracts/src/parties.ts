@@ -4,8 +4,7 @@ import { IsAmount, IsDay, IsWords, Optional } from './fields.js';
 import type { Exposure } from './exposure.js';
 import type { MemoRow } from './memos.js';
 
-export class ChangePartyRequest {
-  @Optional() @IsWords(200) name?: string;
+class PartyFields {
   @Optional() @IsBoolean() isCustomer?: boolean;
   @Optional() @IsBoolean() isSupplier?: boolean;
   @Optional() @IsBoolean() isConsignor?: boolean;
@@ -16,7 +15,7 @@ export class ChangePartyRequest {
   @Optional() @IsWords(100) country?: string;
   @Optional() @IsWords(400) address?: string;
   @Optional()
-  @ValidateIf((party: ChangePartyRequest) => party.email !== '')
+  @ValidateIf((party: PartyFields) => party.email !== '')
   @IsEmail({}, { message: 'That is not an e-mail address.' })
   email?: string;
   @Optional() @IsWords(60) phone?: string;
@@ -35,8 +34,13 @@ export class ChangePartyRequest {
   @Optional() @IsWords(2000) note?: string;
 }
 
-export class AddPartyRequest extends ChangePartyRequest {
-  @IsWords(200) declare name: string;
+/** What is changed about a party; only what is given. */
+export class ChangePartyRequest extends PartyFields {
+  @Optional() @IsWords(200) name?: string;
+}
+
+export class AddPartyRequest extends PartyFields {
+  @IsWords(200) name!: string;
 }
 
 export interface PartyRow {

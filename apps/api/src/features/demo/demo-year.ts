@@ -6,12 +6,13 @@ import { RuleBroken } from '../../http/errors.js';
 import type { Key } from '../ledger/post-act.js';
 import { moveLines } from '../lots/move-lots.js';
 import { takeInLots } from '../lots/take-in.js';
-import { keepAct } from '../memos/amend-memo.js';
+import { keepAct } from '../memos/keep-lines.js';
 import { bookOut } from '../memos/book-memo.js';
 import { answerDifference } from '../returns/answer.js';
 import { weighBackLine } from '../returns/weigh-back.js';
 import type { DemoHouse } from './demo-house.js';
 import type { Dice } from './dice.js';
+import { groupByHome } from './group-by-home.js';
 import { makeLot } from './make-lots.js';
 
 /** Bookings in the order of their days, each by the person who would do it, through the acts that people use. */
@@ -265,12 +266,4 @@ export class DemoYear {
     if (lines.length === 0)
       throw new RuleBroken('demo', 'Nothing is out that could come back light.');
   }
-}
-
-/** Lines by the drawer where the rest of their lot lies, so that a parcel comes together again. */
-function groupByHome<T extends { home: string | null }>(lines: T[]): Map<string, T[]> {
-  const groups = new Map<string, T[]>();
-  for (const line of lines)
-    groups.set(line.home ?? '', [...(groups.get(line.home ?? '') ?? []), line]);
-  return groups;
 }

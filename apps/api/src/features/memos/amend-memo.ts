@@ -1,58 +1,20 @@
 import {
   ExtendMemoRequest,
   HandOverRequest,
-  KeepRequest,
   ReasonRequest,
   RePriceMemoRequest,
   WordsRequest,
-  type MemoLine,
 } from '@foldwell/contracts';
-import { handOver, keep, type Line, together, undoMemo, unKeep } from '@foldwell/ledger';
-import { halfAwayFromZero } from '@foldwell/quantities';
+import { handOver, undoMemo } from '@foldwell/ledger';
 import type { Request } from 'express';
 
 import { readBody } from '../../http/body.js';
 import { RuleBroken, ValidationFailed } from '../../http/errors.js';
 import type { Answer, Context } from '../../http/route.js';
-import { keyOf, postAct, type Key } from '../ledger/post-act.js';
-import { lotIds } from '../lots/move-lots.js';
+import { answeredBefore, keyOf, postAct } from '../ledger/post-act.js';
 import { partyByNumber } from '../parties/parties.js';
-import { linesOf, memoByNumber } from './read-memo.js';
-
-interface Found {
-  id: number;
-  number: string;
-  lines: (MemoLine & { line: Line })[];
-}
-
-/** A memo with its lines as the ledger names them. */
-export async function findMemo(ctx: Context, number: string): Promise<Found> {
-  const memo = await memoByNumber(ctx.db, number);
-  const lines = await linesOf(ctx.db, memo.id);
-  const ids = await lotIds(
-    ctx,
-    lines.map((line) => line.lot),
-  );
-  return {
-    id: Number(memo.id),
-    number: memo.number,
-    lines: lines.map((line) => ({
-      ...line,
-      line: {
-        lot: { id: ids.get(line.lot) ?? 0 },
-        memoId: Number(memo.id),
-        lineId: Number(line.lineId),
-      },
-    })),
-  };
-}
-
-/** One line of a memo by its lot. */
-export function lineOf(memo: Found, lot: string): Found['lines'][number] {
-  const line = memo.lines.find((one) => one.lot === lot.toUpperCase());
-  if (!line) throw new RuleBroken('line_missing', `${lot} is not on M ${memo.number}.`);
-  return line;
-}
+import { findMemo, lineOf } from './find-memo.js';
+import { memoByNumber } from './read-memo.js';
 
 /** A memo booked to the wrong party: every line goes back where it came from, while nothing is settled. */
 export async function voidMemo(req: Request, ctx: Context): Promise<Answer> {
@@ -136,12 +98,15 @@ export async function rePriceMemo(req: Request, ctx: Context): Promise<Answer> {
 /** Back and out to another party in one act: a new memo, at the same prices. */
 export async function handOverMemo(req: Request, ctx: Context): Promise<Answer> {
   const { party: number, due, reason, releaseReason } = await readBody(req, HandOverRequest);
+  const key = keyOf(req, ctx);
+  const before = await answeredBefore(ctx, key);
+  if (before) return { status: 201, body: { number: String(before.memoNumber) } };
   const memo = await findMemo(ctx, String(req.params.number));
   const party = await partyByNumber(ctx.db, number);
   const out = memo.lines.filter((line) => line.flows.out > 0);
   if (out.length === 0)
     throw new RuleBroken('nothing_out', `Nothing of M ${memo.number} is still out.`);
-  const written = await postAct(ctx, keyOf(req, ctx), {
+  const written = await postAct(ctx, key, {
     kind: 'memo out',
     reason,
     releaseReason,
@@ -181,80 +146,6 @@ export async function handOverMemo(req: Request, ctx: Context): Promise<Answer> 
     },
   });
   return { status: 201, body: { number: String(written.memoNumber) } };
-}
-
-/** Kept, whole or in part, at the memo price or a newly agreed one. */
-export async function keepLines(req: Request, ctx: Context): Promise<Answer> {
-  const request = await readBody(req, KeepRequest);
-  return {
-    status: 201,
-    body: await keepAct(ctx, keyOf(req, ctx), String(req.params.number), request),
-  };
-}
-
-/** The act itself, as people and the demo house do it. */
-export async function keepAct(
-  ctx: Context,
-  key: Key,
-  number: string,
-  { lines, businessDate }: KeepRequest,
-): Promise<{ movementId: string }> {
-  const memo = await findMemo(ctx, number);
-  const kept = lines.map((asked) => ({ asked, found: lineOf(memo, asked.lot) }));
-  const written = await postAct(ctx, key, {
-    kind: 'kept',
-    memoId: memo.id,
-    businessDate,
-    ...together(
-      ...kept.map(({ asked: { weight, pieces }, found }) => keep(found.line, { weight, pieces })),
-    ),
-    keeps: kept.map(({ asked, found }) => ({
-      lineId: found.line.lineId,
-      weight: asked.weight,
-      pieces: asked.pieces,
-      price: asked.price ?? null,
-      agreedSum: asked.sum ?? null,
-      amount: keptAmount(found, asked),
-    })),
-  });
-  return { movementId: String(written.movementId) };
-}
-
-function keptAmount(
-  line: MemoLine,
-  asked: { weight: number; price?: number | undefined; sum?: number | undefined },
-): number {
-  if (asked.sum !== undefined) return asked.sum;
-  const [w, sent] = [BigInt(asked.weight), BigInt(line.flows.sent)];
-  if (asked.price === undefined && line.sum !== null)
-    return Number(halfAwayFromZero(BigInt(line.sum) * w, sent));
-  return Number(
-    halfAwayFromZero(
-      BigInt(asked.price ?? line.price ?? 0) * BigInt(line.pricedWeight) * w,
-      sent * 1000n,
-    ),
-  );
-}
-
-/** A kept line is on memo again, before it is invoiced. */
-export async function unKeepLines(req: Request, ctx: Context): Promise<Answer> {
-  const { lines } = await readBody(req, KeepRequest);
-  const memo = await findMemo(ctx, String(req.params.number));
-  const back = lines.map((asked) => ({ asked, found: lineOf(memo, asked.lot) }));
-  const written = await postAct(ctx, keyOf(req, ctx), {
-    kind: 'un-kept',
-    memoId: memo.id,
-    ...together(
-      ...back.map(({ asked: { weight, pieces }, found }) => unKeep(found.line, { weight, pieces })),
-    ),
-    keeps: back.map(({ asked, found }) => ({
-      lineId: found.line.lineId,
-      weight: -asked.weight,
-      pieces: -asked.pieces,
-      amount: -keptAmount(found, asked),
-    })),
-  });
-  return { status: 201, body: { movementId: String(written.movementId) } };
 }
 
 /** Writes down what we said or they said. */

@@ -8,6 +8,7 @@ import { databaseError } from '../../http/problem.js';
 import { sentenceOf } from '../../http/constraint-sentences.js';
 import type { Answer, Context } from '../../http/route.js';
 import type { Written } from '../ledger/act.js';
+import { refuseOutOfStep, weightsOf } from '../ledger/in-step.js';
 import { answeredBefore, type Key, keyOf, postAct } from '../ledger/post-act.js';
 import { houseToday } from '../lots/list-lots.js';
 import { type LotRecord, SELECT_LOT } from '../lots/lot-row.js';
@@ -32,6 +33,7 @@ export async function bookOut(
   const party = await partyByNumber(ctx.db, request.party);
   if (!party.isCustomer && !party.isBroker)
     throw new RuleBroken('party_not_customer', `${party.name} is not a customer of ours.`);
+  await refuseOutOfStep(ctx, weightsOf(request.lines));
   const lines = await Promise.all(request.lines.map((line) => plan(ctx, line)));
   try {
     return booked(

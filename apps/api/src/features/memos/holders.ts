@@ -12,6 +12,8 @@ export interface Holding {
   memo: string | null;
   party: string | null;
   due: string | null;
+  /** Since when a memo has it. */
+  since: string | null;
   weight: number;
   pieces: number;
   free: number;
@@ -30,7 +32,7 @@ export async function holdingsOf(db: DataSource, lotId: string): Promise<Holding
     })[]
   >(
     `SELECT b.place_id AS "placeId", p.kind, p.name, p.safe, m.number AS memo, y.name AS party, coalesce(n.due, m.due)::text AS due,
-       b.weight, b.pieces, b.reserved_weight AS reserved
+       m.business_date::text AS since, b.weight, b.pieces, b.reserved_weight AS reserved
      FROM balance b JOIN place p ON p.id = b.place_id LEFT JOIN memo m ON m.id = p.memo_id
      LEFT JOIN memo_line n ON n.memo_id = m.id AND n.lot_id = b.lot_id LEFT JOIN party y ON y.id = coalesce(m.party_id, p.party_id)
      WHERE b.lot_id = $1 AND p.part IS NOT NULL AND (b.weight > 0 OR b.pieces > 0)
@@ -45,34 +47,39 @@ export async function holdingsOf(db: DataSource, lotId: string): Promise<Holding
   }));
 }
 
-/** Who has a lot that isn't free, in words with a way there. */
-export function whoHasIt(
-  lot: string,
-  holdings: Holding[],
-  today: string,
-): { sentence: string; path: string | null; pathWords: string | null } {
-  const [first] = holdings;
+/** What is said of a lot that can't be booked, and a way there. */
+export interface WhoHasIt {
+  sentence: string;
+  path: string | null;
+  pathWords: string | null;
+}
+
+/** Who has a lot that isn't free, since when, what of it is still free, and a way there. */
+export function whoHasIt(lot: string, holdings: Holding[], today: string): WhoHasIt {
+  const toLot = { path: `/lots/${lot}`, pathWords: `Open ${lot}` };
+  if (holdings.length === 0)
+    return { sentence: `${lot} not added. It is not in the house any more.`, ...toLot };
   const free = holdings.reduce((sum, holding) => sum + holding.free, 0);
   const rest = free > 0 ? ` ${formatCarats(free)} ct of it is still free.` : '';
-  if (!first)
-    return {
-      sentence: `${lot} not added. It is not in the house any more.`,
-      path: `/lots/${lot}`,
-      pathWords: `Open ${lot}`,
-    };
-  const memo = holdings.find((holding) => holding.kind === 'memo');
+  const memos = holdings.filter((holding) => holding.kind === 'memo');
+  const [memo] = memos;
   if (memo) {
-    const late = memo.due ? daysBetween(memo.due, today) : 0;
-    const when = late > 0 ? `late ${late} d` : memo.due ? `due ${shortDate(memo.due, today)}` : '';
+    const named = memos.slice(0, 3).map((one) => outOn(one, today));
+    const more = memos.length > 3 ? `, and on ${memos.length - 3} more` : '';
     return {
-      sentence: `${lot} not added. It is out on M ${memo.memo} to ${memo.party}, ${when}.${rest}`,
+      sentence: `${lot} not added. It is out on ${named.join('; on ')}${more}.${rest}`,
       path: `/memos/${memo.memo}`,
       pathWords: `Open M ${memo.memo}`,
     };
   }
-  return {
-    sentence: `${lot} not added. It is not free: ${holdings.map(placeWords).join(', ')}.${rest}`,
-    path: `/lots/${lot}`,
-    pathWords: `Open ${lot}`,
-  };
+  const places = holdings.map(placeWords).join(', ');
+  const sentence = free > 0 ? `It lies in ${places}.${rest}` : `It is not free: ${places}.`;
+  return { sentence: `${lot} not added. ${sentence}`, ...toLot };
+}
+
+/** `M 20562 to Tessaly & Rook since 5 Nov, late 12 d`. */
+function outOn({ memo, party, since, due }: Holding, today: string): string {
+  const late = due ? daysBetween(due, today) : 0;
+  const when = late > 0 ? `, late ${late} d` : due ? `, due ${shortDate(due, today)}` : '';
+  return `M ${memo} to ${party}${since ? ` since ${shortDate(since, today)}` : ''}${when}`;
 }

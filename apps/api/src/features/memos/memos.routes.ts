@@ -1,15 +1,8 @@
 import { type Route, STAFF } from '../../http/route.js';
-import {
-  extendMemo,
-  handOverMemo,
-  keepLines,
-  rePriceMemo,
-  unKeepLines,
-  voidMemo,
-  writeWords,
-} from './amend-memo.js';
+import { extendMemo, handOverMemo, rePriceMemo, voidMemo, writeWords } from './amend-memo.js';
 import { bookMemo } from './book-memo.js';
 import { changeDraft, dropDraft, keepDraft, listDrafts, readDraft } from './drafts.js';
+import { keepLines, unKeepLines } from './keep-lines.js';
 import { previewMemo } from './preview-memo.js';
 import { readLine } from './read-line.js';
 import { listMemos, readDocument, readMemo } from './read-memo.js';

@@ -237,7 +237,10 @@ const COLUMNS = {
   note: 'note',
 } as const satisfies Record<keyof ChangePartyRequest, string>;
 
-function refuseLimits(request: ChangePartyRequest, { person }: Context): void {
+function refuseLimits(
+  request: { creditLimit?: number | null; memoLimit?: number | null },
+  { person }: Context,
+): void {
   if (
     (request.creditLimit !== undefined || request.memoLimit !== undefined) &&
     !person.roles.includes('owner')

@@ -35,9 +35,9 @@ export async function signIn(req: Request, { db }: Context): Promise<Answer> {
   await forgetFailures(db, account);
   await beginSession(req, person.id);
   await db.query(
-    `DELETE FROM session WHERE sess ->> 'personId' = $1 AND sid NOT IN (
-    SELECT sid FROM session WHERE sess ->> 'personId' = $1 ORDER BY expire DESC LIMIT ${MOST_SESSIONS})`,
-    [person.id],
+    `DELETE FROM session WHERE sess ->> 'personId' = $1 AND sid <> $2 AND sid NOT IN (
+    SELECT sid FROM session WHERE sess ->> 'personId' = $1 AND sid <> $2 ORDER BY expire DESC LIMIT ${MOST_SESSIONS - 1})`,
+    [person.id, req.sessionID],
   );
   await db.query('UPDATE person SET last_here_at = clock_timestamp() WHERE id = $1', [person.id]);
   await db.query(`INSERT INTO audit (person_id, action) VALUES ($1, 'sign in')`, [person.id]);

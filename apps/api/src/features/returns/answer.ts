@@ -17,8 +17,8 @@ import type { Request } from 'express';
 import { readBody } from '../../http/body.js';
 import { NotFound, RuleBroken } from '../../http/errors.js';
 import type { Answer, Context } from '../../http/route.js';
-import type { Act } from '../ledger/act.js';
-import { type Key, keyOf, postAct } from '../ledger/post-act.js';
+import type { Act, Written } from '../ledger/act.js';
+import { answeredBefore, type Key, keyOf, postAct } from '../ledger/post-act.js';
 
 interface Difference {
   id: string;
@@ -26,6 +26,8 @@ interface Difference {
   memo_line_id: string | null;
   memo_id: string | null;
   kind: string;
+  answer: string | null;
+  answered_by_name: string | null;
   expected_weight: string;
   found_weight: string;
   held_weight: string;
@@ -58,19 +60,9 @@ export async function answerDifference(
   id: string,
   { answer: word, reason, businessDate }: AnswerRequest,
 ): Promise<{ movementId: string | null }> {
-  const [difference] = await ctx.db.query<Difference[]>(
-    `SELECT d.*, n.memo_id, n.price, n.agreed_sum, n.priced_weight, n.sent_weight, m.party_id, l.origin, l.treatment,
-       part.place_id AS part_place, part.line_id AS part_line
-     FROM difference d JOIN lot l ON l.id = d.lot_id LEFT JOIN memo_line n ON n.id = d.memo_line_id LEFT JOIN memo m ON m.id = n.memo_id
-     -- Cost that comes back goes to a place of the lot that holds weight: the desk first, then the safe.
-     LEFT JOIN LATERAL (SELECT b.place_id, x.id AS line_id FROM balance b JOIN place p ON p.id = b.place_id
-       LEFT JOIN memo_line x ON p.kind = 'memo' AND x.memo_id = p.memo_id AND x.lot_id = b.lot_id
-       WHERE b.lot_id = d.lot_id AND b.inside AND b.weight > 0 AND p.kind <> 'missing'
-       ORDER BY array_position(ARRAY['return desk', 'drawer', 'show', 'quarantine', 'person', 'memo'], p.kind) NULLS LAST LIMIT 1) part ON true
-     WHERE d.id::text = $1`,
-    [id],
-  );
-  if (!difference) throw new NotFound('There is no such difference.');
+  const before = await answeredBefore(ctx, key);
+  if (before) return postedBy(before);
+  const difference = await differenceById(ctx, id);
   if (NEEDS_REASON.includes(word) && !reason?.trim())
     throw new RuleBroken('movement_reason_where_due', `“${word}” needs a reason.`);
   const act = actOf(difference, word);
@@ -81,7 +73,34 @@ export async function answerDifference(
     ...(difference.memo_id && { memoId: Number(difference.memo_id) }),
     answers: [{ differenceId: Number(difference.id), answer: word, reason }],
   });
-  return { movementId: written.movementId === null ? null : String(written.movementId) };
+  return postedBy(written);
+}
+
+const postedBy = ({ movementId }: Written) => ({
+  movementId: movementId === null ? null : String(movementId),
+});
+
+async function differenceById({ db }: Context, id: string): Promise<Difference> {
+  const [difference] = await db.query<Difference[]>(
+    `SELECT d.*, w.name AS answered_by_name, n.memo_id, n.price, n.agreed_sum, n.priced_weight, n.sent_weight, m.party_id, l.origin, l.treatment,
+       part.place_id AS part_place, part.line_id AS part_line
+     FROM difference d JOIN lot l ON l.id = d.lot_id LEFT JOIN memo_line n ON n.id = d.memo_line_id LEFT JOIN memo m ON m.id = n.memo_id
+     LEFT JOIN person w ON w.id = d.answered_by
+     -- Cost that comes back goes to a place of the lot that holds weight: the desk first, then the safe.
+     LEFT JOIN LATERAL (SELECT b.place_id, x.id AS line_id FROM balance b JOIN place p ON p.id = b.place_id
+       LEFT JOIN memo_line x ON p.kind = 'memo' AND x.memo_id = p.memo_id AND x.lot_id = b.lot_id
+       WHERE b.lot_id = d.lot_id AND b.inside AND b.weight > 0 AND p.kind <> 'missing'
+       ORDER BY array_position(ARRAY['return desk', 'drawer', 'show', 'quarantine', 'person', 'memo'], p.kind) NULLS LAST LIMIT 1) part ON true
+     WHERE d.id::text = $1`,
+    [id],
+  );
+  if (!difference) throw new NotFound('There is no such difference.');
+  if (difference.answer !== null)
+    throw new RuleBroken(
+      'difference_still_open',
+      `That difference was answered already by ${difference.answered_by_name}: ${difference.answer}.`,
+    );
+  return difference;
 }
 
 const NEEDS_REASON = ['written off', 'record corrected', 'other stone'];

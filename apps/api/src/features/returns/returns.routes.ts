@@ -1,7 +1,8 @@
 import { type Route, STAFF } from '../../http/route.js';
 import { answer } from './answer.js';
 import { askCustomer, closeReturn, listDifferences, listReturns, putAway } from './returns.js';
-import { weighAgain, weighBack } from './weigh-back.js';
+import { weighAgain } from './weigh-again.js';
+import { weighBack } from './weigh-back.js';
 
 const RECEIVERS = ['owner', 'dealer', 'bookkeeper'] as const;
 

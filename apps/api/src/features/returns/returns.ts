@@ -6,7 +6,7 @@ import { NotFound } from '../../http/errors.js';
 import type { Answer, Context } from '../../http/route.js';
 import { keyOf, postAct } from '../ledger/post-act.js';
 import { moveLines } from '../lots/move-lots.js';
-import { findMemo } from '../memos/amend-memo.js';
+import { findMemo } from '../memos/find-memo.js';
 import { differenceRows } from './difference-rows.js';
 
 /** Memos with something out or not agreeing, and what lies on the desk or in quarantine. */

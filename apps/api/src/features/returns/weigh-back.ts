@@ -1,15 +1,15 @@
-import { WeighAgainRequest, WeighBackRequest, type WeighedBack } from '@foldwell/contracts';
-import { formatCarats, formatPoints } from '@foldwell/quantities';
+import { WeighBackRequest, type WeighedBack } from '@foldwell/contracts';
 import type { Request } from 'express';
 
 import { readBody } from '../../http/body.js';
 import { RuleBroken, ValidationFailed } from '../../http/errors.js';
 import type { Answer, Context } from '../../http/route.js';
-import { type Key, keyOf, postAct } from '../ledger/post-act.js';
-import { findMemo, lineOf } from '../memos/amend-memo.js';
-import { type Expected, judgeReading, type Judged } from './judge-reading.js';
+import { answeredBefore, type Key, keyOf, postAct } from '../ledger/post-act.js';
+import { findMemo, lineOf } from '../memos/find-memo.js';
+import { type Expected, judgeReading } from './judge-reading.js';
 import { returnAct } from './return-act.js';
-import type { FoundLine } from './weighed.js';
+import { asks, says } from './said-at-desk.js';
+import { weighedBefore } from './weighed-before.js';
 
 /** One Enter at the desk: reads, judges, posts; asks first where number or weight of a stone disagree. */
 export async function weighBack(req: Request, ctx: Context): Promise<Answer> {
@@ -25,6 +25,8 @@ export async function weighBackLine(
   number: string,
   request: WeighBackRequest,
 ): Promise<WeighedBack> {
+  const before = await answeredBefore(ctx, key);
+  if (before) return weighedBefore(ctx, before);
   const memo = await findMemo(ctx, number);
   const line = lineOf(memo, request.lot);
   if (line.flows.out === 0)
@@ -56,7 +58,7 @@ export async function weighBackLine(
   return {
     weighing: written.weighings[0] ?? 0,
     outcome: judged.outcome,
-    says: says(line, request, judged),
+    says: says(judged.outcome, request.weight - line.flows.out),
   };
 }
 
@@ -72,54 +74,4 @@ async function rulesOf({ db }: Context, memoId: number): Promise<Rules> {
     [memoId],
   );
   return rules as Rules;
-}
-
-/** Weighed again while a difference is open: every reading is kept, the difference is answered by somebody else. */
-export async function weighAgain(req: Request, ctx: Context): Promise<Answer> {
-  const { weight, pieces } = await readBody(req, WeighAgainRequest);
-  const [difference] = await ctx.db.query<{ lot_id: string; memo_line_id: string | null }[]>(
-    'SELECT lot_id, memo_line_id FROM difference WHERE id::text = $1 AND answer IS NULL',
-    [String(req.params.id)],
-  );
-  if (!difference)
-    throw new RuleBroken('difference_still_open', 'That difference is answered already.');
-  const written = await postAct(ctx, keyOf(req, ctx), {
-    kind: null,
-    weighings: [
-      {
-        lot: { id: Number(difference.lot_id) },
-        purpose: 'again',
-        weight,
-        pieces,
-        ...(difference.memo_line_id && { lineId: Number(difference.memo_line_id) }),
-        difference: { id: Number(req.params.id) },
-      },
-    ],
-    audit: { action: 'weighed again' },
-  });
-  return { status: 201, body: { weighing: written.weighings[0] } };
-}
-
-function asks(line: FoundLine, { weight, reportRead }: WeighBackRequest): string {
-  const off = formatPoints(weight - line.flows.out);
-  const number =
-    reportRead && !line.report.toUpperCase().endsWith(reportRead.trim().toUpperCase())
-      ? ` Its number reads ${reportRead}, ours is ${line.report}.`
-      : '';
-  return `${line.lot} does not match: ${formatCarats(weight)} ct found, ${formatCarats(line.flows.out)} ct expected, ${off}.${number} Is it ours?`;
-}
-
-function says(line: FoundLine, { weight }: WeighBackRequest, { outcome }: Judged): string {
-  const off = weight - line.flows.out;
-  const words: Record<string, string> = {
-    agrees: 'agrees',
-    restated: `inside tolerance, restated ${formatPoints(off)}`,
-    short: `${formatPoints(-off).replace('+', '')} missing, in hand`,
-    excess: `${formatPoints(off)} over, in quarantine unposted`,
-    'pieces short': 'pieces missing, in hand',
-    'not found': 'not found, all of it missing',
-    'other weight': 'whole to quarantine',
-    'suspected switch': 'ours stays on the memo; what came lies in quarantine',
-  };
-  return words[outcome] ?? outcome;
 }

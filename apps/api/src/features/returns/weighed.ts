@@ -1,6 +1,6 @@
 import type { WeighBackRequest } from '@foldwell/contracts';
 
-import type { findMemo } from '../memos/amend-memo.js';
+import type { findMemo } from '../memos/find-memo.js';
 import type { Judged } from './judge-reading.js';
 
 /** A line of a memo as the ledger names it. */
