@@ -166,6 +166,8 @@ export interface MemoPreview {
   overBy: number;
   overMemoBy: number;
   lapsed: string | null;
+  /** Consigned goods on it that are due back to their owner before this memo ends. */
+  cautions: string[];
   /** Weight the last parcel line could keep to stay inside, thousandths of a carat. */
   cutLastTo: number | null;
   owners: string[];

@@ -76,6 +76,8 @@ CREATE TABLE place (
   party_id bigint CONSTRAINT place_party_known REFERENCES party,
   person_id bigint CONSTRAINT place_person_known REFERENCES person,
   memo_id bigint,
+  -- Due back to the consignor, for what came in on memo.
+  due date,
   is_closed boolean NOT NULL DEFAULT false,
   inside boolean NOT NULL GENERATED ALWAYS AS (kind NOT IN (
     'supplier', 'memo in', 'sold', 'loss', 'charges', 'conversion')) STORED,

@@ -287,7 +287,8 @@ BEGIN
   -- Counters by name: customer, lot, memo, weighing.
   lots := make_lots(p_act, day);
   FOR q IN SELECT x FROM jsonb_array_elements(coalesce(p_act -> 'newPlaces', '[]')) x LOOP
-    INSERT INTO place (kind, name, party_id) VALUES (q ->> 'kind', q ->> 'name', (q ->> 'partyId')::bigint)
+    INSERT INTO place (kind, name, party_id, due)
+      VALUES (q ->> 'kind', q ->> 'name', (q ->> 'partyId')::bigint, (q ->> 'due')::date)
       RETURNING id INTO new_place;
     places := places || jsonb_build_object(q ->> 'ref', new_place);
   END LOOP;

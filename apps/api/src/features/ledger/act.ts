@@ -11,7 +11,13 @@ export interface Act extends Partial<Legs> {
   memoId?: number;
   reverses?: number;
   newLots?: Record<string, unknown>[];
-  newPlaces?: { ref: string; kind: string; name: string; partyId: string }[];
+  newPlaces?: {
+    ref: string;
+    kind: string;
+    name: string;
+    partyId: string;
+    due?: string | undefined;
+  }[];
   newMemo?: Record<string, unknown>;
   newDifferences?: NewDifference[];
   answers?: { differenceId: number; answer: string; reason?: string | undefined }[];

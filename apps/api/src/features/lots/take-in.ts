@@ -44,6 +44,7 @@ export async function takeInLots(ctx: Context, key: Key, request: TakeInRequest)
               kind: 'memo in',
               name: `${request.paper || 'In'}, ${party?.name}`,
               partyId: party?.id ?? '',
+              due: request.due,
             },
           ],
           ...consignIn({ new: 'memo in' }, request.lots.map(arrival)),

@@ -1,10 +1,12 @@
 import { BookMemoRequest, type MemoPreview } from '@foldwell/contracts';
-import { lineAmount } from '@foldwell/quantities';
+import { lineAmount, shortDate } from '@foldwell/quantities';
 import type { Request } from 'express';
+import type { DataSource } from 'typeorm';
 
 import { readBody } from '../../http/body.js';
 import type { Answer, Context } from '../../http/route.js';
 import { exposureOf, keepsOf, partyByNumber } from '../parties/parties.js';
+import { consignorDues } from './consignor-due.js';
 import { memoRows } from './memo-rows.js';
 
 /** Exposure while writing: what is out, what this memo adds, how far over, and what would make it fit. */
@@ -55,10 +57,25 @@ export async function previewMemo(req: Request, { db }: Context): Promise<Answer
       last && isParcel && overBy > 0
         ? cut(last, amounts.at(-1) ?? 0, overBy, house?.step ?? 10)
         : null,
+    cautions: await dueBefore(db, request),
     owners: owners.map((owner) => owner.name),
     keeps: await keepsOf(db, party.id),
   };
   return { body };
+}
+
+/** Due dates chain: a memo that ends after what its goods came in on says so. */
+async function dueBefore(db: DataSource, { due, lines }: BookMemoRequest): Promise<string[]> {
+  const dues = await consignorDues(
+    db,
+    lines.map(({ lot }) => lot.toUpperCase()),
+  );
+  return dues
+    .filter((one) => one.due < due)
+    .map(
+      (one) =>
+        `${one.lot} is due back to ${one.owner} on ${shortDate(one.due)}, before this memo ends.`,
+    );
 }
 
 /** The most of the last line, in the house's step, that stays inside the limit; null where none does. */

@@ -9,6 +9,7 @@ import {
   readMoney,
   readPieces,
   type Reading,
+  shortDate,
   type Step,
 } from '@foldwell/quantities';
 import type { Request } from 'express';
@@ -19,6 +20,7 @@ import type { Answer, Context } from '../../http/route.js';
 import { houseToday } from '../lots/list-lots.js';
 import { barOf, type LotRecord, lotRow, SELECT_LOT, whatWords } from '../lots/lot-row.js';
 import { placeWords } from '../places/place-words.js';
+import { consignorDues } from './consignor-due.js';
 import { holdingsOf, whoHasIt, type Holding } from './holders.js';
 
 /** What Enter would do with a scan line: a line for the memo, or why not and a way there. */
@@ -60,7 +62,11 @@ async function readScan(
   const asked = readParts(parts, lot, from, house as House);
   if ('why' in asked) return refused(`${lot.number} not added. ${asked.why}`);
   const line = await lineOf(db, lot, from, { ...asked, currency: (house as House).currency });
-  return { line, says: saysOf(line, from, house as House), warnings: warningsFor(lot) };
+  return {
+    line,
+    says: saysOf(line, from, house as House),
+    warnings: await warningsFor(db, lot, today),
+  };
 }
 
 type Scanned = LotRecord & { reportScanned: boolean };
@@ -205,9 +211,11 @@ function saysOf(line: DraftLine, from: Holding, { currency }: House): string {
   return `${parts}, ${formatMoney(line.amount, currency)}${unit === null ? '' : ` at ${formatPrice(unit, currency)}`}`;
 }
 
-function warningsFor(lot: LotRecord): string[] {
+async function warningsFor(db: DataSource, lot: LotRecord, today: string): Promise<string[]> {
+  const [back] = lot.owner ? await consignorDues(db, [lot.number]) : [];
   return [
     lot.origin === 'not tested' && 'Not tested for origin.',
-    lot.owner && `Consigned by ${lot.owner}.`,
+    lot.owner &&
+      `Consigned by ${lot.owner}${back ? `, due back to them ${shortDate(back.due, today)}` : ''}.`,
   ].filter((one): one is string => Boolean(one));
 }

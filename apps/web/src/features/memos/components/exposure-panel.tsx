@@ -12,7 +12,7 @@ import { linesToBook, type MemoDraft } from './memo-draft';
 export function usePreview(draft: MemoDraft, due: string): MemoPreview | undefined {
   const lines = linesToBook(draft.lines);
   const { data } = useQuery<MemoPreview>({
-    queryKey: ['preview', draft.party, JSON.stringify(lines)],
+    queryKey: ['preview', draft.party, due, JSON.stringify(lines)],
     enabled: draft.party !== '' && lines.length > 0,
     placeholderData: (before) => before,
     retry: false,
@@ -121,6 +121,11 @@ export function ExposurePanel({
           )}
         </div>
       )}
+      {preview.cautions.map((caution) => (
+        <p key={caution} className="note warn">
+          {caution}
+        </p>
+      ))}
       <table className="inner">
         <tbody>
           <tr>
