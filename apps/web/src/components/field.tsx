@@ -30,11 +30,8 @@ export function Field({
   const id = useId();
   const about = problem ?? help;
   return (
-    <label
-      className={`field ${isNumber ? 'number' : ''} ${problem ? 'bad' : ''} ${className}`}
-      htmlFor={id}
-    >
-      <span>{label}</span>
+    <div className={`field ${isNumber ? 'number' : ''} ${problem ? 'bad' : ''} ${className}`}>
+      <label htmlFor={id}>{label}</label>
       <span className="box">
         <input
           id={id}
@@ -55,7 +52,7 @@ export function Field({
           {about}
         </span>
       )}
-    </label>
+    </div>
   );
 }
 
@@ -79,8 +76,8 @@ export function Choice({
 }) {
   const id = useId();
   return (
-    <label className={`field ${problem ? 'bad' : ''} ${className}`} htmlFor={id}>
-      <span>{label}</span>
+    <div className={`field ${problem ? 'bad' : ''} ${className}`}>
+      <label htmlFor={id}>{label}</label>
       <span className="box">
         <select
           id={id}
@@ -96,7 +93,7 @@ export function Choice({
         </select>
       </span>
       {(problem ?? help) && <span className="help">{problem ?? help}</span>}
-    </label>
+    </div>
   );
 }
 
@@ -118,8 +115,8 @@ export function TextArea({
 }) {
   const id = useId();
   return (
-    <label className="field" htmlFor={id}>
-      <span>{label}</span>
+    <div className="field">
+      <label htmlFor={id}>{label}</label>
       <span className="box">
         <textarea
           id={id}
@@ -130,6 +127,6 @@ export function TextArea({
         />
       </span>
       {help && <span className="help">{help}</span>}
-    </label>
+    </div>
   );
 }
