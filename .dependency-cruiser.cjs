@@ -81,9 +81,9 @@ module.exports = {
     {
       name: 'shipped-code-needs-no-test-code',
       severity: 'error',
-      comment: 'Builders and the local stack are not shipped.',
+      comment: 'Tests, tools and the local stack are not shipped.',
       from: { path: '^(apps|packages/(quantities|ledger|contracts))/', pathNot: '[.]test[.]tsx?$' },
-      to: { path: '^(packages/(testing|local-stack|tooling)|tests)/' },
+      to: { path: '^(packages/(local-stack|tooling)|tests)/' },
     },
     {
       name: 'start-needs-no-package',

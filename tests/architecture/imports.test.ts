@@ -47,7 +47,7 @@ const VIOLATIONS: [string, string, string][] = [
   [
     'shipped-code-needs-no-test-code',
     'apps/api/src/http/builds.ts',
-    "import '../../../../packages/testing/src/index.js';\n",
+    "import '../../../../packages/tooling/src/index.js';\n",
   ],
   ['start-needs-no-package', 'packages/local-stack/src/early.mjs', "import 'pg';\n"],
   ['model-is-independent', 'tests/properties/model.ts', "import '@foldwell/ledger';\n"],

@@ -12,7 +12,7 @@ const WORKSPACES = [
   'packages/ledger',
   'packages/local-stack',
   'packages/quantities',
-  'packages/testing',
+  'packages/tooling',
   'tests',
 ];
 const INSTALLED = ['express', 'pg', 'react', 'typeorm', 'class-validator'];
