@@ -155,6 +155,12 @@ function sendBodyProblem(error: unknown, res: Response): boolean {
       code: 'not_json',
       detail: 'Only plain JSON in UTF-8 is read here.',
     });
+  else if (status === 404)
+    sendProblem(res, {
+      status,
+      code: 'not_found',
+      detail: 'There is nothing at that address. Load the page again.',
+    });
   else if (status === 400)
     sendProblem(res, { status: 400, code: 'not_readable', detail: 'The request can’t be read.' });
   else return false;
