@@ -74,7 +74,6 @@ export interface ReturnsList {
     party: string;
     due: string;
     out: number;
-    onDesk: number;
     differences: number;
   }[];
   desk: {

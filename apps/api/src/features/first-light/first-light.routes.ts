@@ -46,7 +46,7 @@ async function firstLight(_req: Request, { db }: Context): Promise<Answer> {
       returned: `${n('desk_lots')} lots on the return desk`,
       sold: `${n('sold_lots')} lots kept or sold`,
       missing: differences.length === 0 ? 'nothing to answer' : `${differences.length} to answer`,
-      whole: `taken in ${formatCarats(n('whole') - n('restated'))}, restated ${n('restated') === 0 ? '0 pt' : formatPoints(n('restated'))}`,
+      whole: `taken in ${formatCarats(n('whole') - n('restated'))}, ${n('restated') < 0 ? 'restated or lost' : 'restated'} ${n('restated') === 0 ? '0 pt' : formatPoints(n('restated'))}`,
     },
   };
   return { body };

@@ -57,7 +57,7 @@ export async function previewMemo(req: Request, { db }: Context): Promise<Answer
       last && isParcel && overBy > 0
         ? cut(last, amounts.at(-1) ?? 0, overBy, house?.step ?? 10)
         : null,
-    cautions: await dueBefore(db, request),
+    cautions: await dueBefore(db, request, house?.today),
     owners: owners.map((owner) => owner.name),
     keeps: await keepsOf(db, party.id),
   };
@@ -65,7 +65,11 @@ export async function previewMemo(req: Request, { db }: Context): Promise<Answer
 }
 
 /** Due dates chain: a memo that ends after what its goods came in on says so. */
-async function dueBefore(db: DataSource, { due, lines }: BookMemoRequest): Promise<string[]> {
+async function dueBefore(
+  db: DataSource,
+  { due, lines }: BookMemoRequest,
+  today: string | undefined,
+): Promise<string[]> {
   const dues = await consignorDues(
     db,
     lines.map(({ lot }) => lot.toUpperCase()),
@@ -74,7 +78,7 @@ async function dueBefore(db: DataSource, { due, lines }: BookMemoRequest): Promi
     .filter((one) => one.due < due)
     .map(
       (one) =>
-        `${one.lot} is due back to ${one.owner} on ${shortDate(one.due)}, before this memo ends.`,
+        `${one.lot} is due back to ${one.owner} on ${shortDate(one.due, today)}, before this memo ends.`,
     );
 }
 

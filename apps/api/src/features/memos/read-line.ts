@@ -2,6 +2,7 @@ import { type DraftLine, ReadLineRequest, type ReadLine } from '@foldwell/contra
 import {
   formatCarats,
   formatMoney,
+  formatPieces,
   formatPrice,
   lineAmount,
   pricePerCarat,
@@ -143,7 +144,7 @@ function quantityOf(
     Math.max(1, Math.round((from.pieces * asked) / from.weight)),
   );
   const count = pieces ?? follows;
-  if (count > from.pieces) return { why: `Only ${from.pieces} pcs are in ${place}.` };
+  if (count > from.pieces) return { why: `Only ${formatPieces(from.pieces)} are in ${place}.` };
   if (pieces === null && !lot.is_estimated)
     return {
       why: `Its pieces are counted: say how many go, such as ${lot.number} ${formatCarats(asked)} ${follows}p.`,
@@ -203,7 +204,7 @@ async function inCurrency(
 function saysOf(line: DraftLine, from: Holding, { currency }: House): string {
   const parts =
     line.kind === 'parcel'
-      ? `${formatCarats(line.weight)} of ${formatCarats(from.free)} ct in ${line.placeWords}, ${line.isEstimated ? 'about ' : ''}${line.pieces} pcs`
+      ? `${formatCarats(line.weight)} of ${formatCarats(from.free)} ct in ${line.placeWords}, ${formatPieces(line.pieces, line.isEstimated)}`
       : `${formatCarats(line.weight)} ct in ${line.placeWords}`;
   const unit = line.price ?? pricePerCarat(line.amount, line.pricedWeight);
   if (line.price === null && line.sum === null)

@@ -12,7 +12,7 @@ import { differenceRows } from './difference-rows.js';
 /** Memos with something out or not agreeing, and what lies on the desk or in quarantine. */
 export async function listReturns(_req: Request, { db }: Context): Promise<Answer> {
   const memos = await db.query<ReturnsList['memos']>(
-    `SELECT m.number::text, y.name AS party, m.due::text, sum(n.out_weight)::float8 AS out, 0 AS "onDesk",
+    `SELECT m.number::text, y.name AS party, m.due::text, sum(n.out_weight)::float8 AS out,
        count(d.id)::int AS differences
      FROM memo m JOIN party y ON y.id = m.party_id JOIN memo_line n ON n.memo_id = m.id
      LEFT JOIN difference d ON d.memo_line_id = n.id AND d.answer IS NULL
