@@ -8,6 +8,7 @@ export * from './parties.js';
 export * from './lots.js';
 export * from './pick-up.js';
 export * from './memos.js';
+export * from './memo-drafts.js';
 export * from './returns.js';
 export * from './first-light.js';
 export * from './fields.js';

@@ -5,7 +5,6 @@ import {
   IsArray,
   IsBoolean,
   IsInt,
-  IsObject,
   IsString,
   Max,
   MaxLength,
@@ -14,8 +13,6 @@ import {
 } from 'class-validator';
 
 import { IsAmount, IsDay, IsPieces, IsWeight, IsWords, Optional } from './fields.js';
-import type { Bar } from './lots.js';
-import type { Exposure } from './exposure.js';
 
 export class MemoLineRequest {
   @IsWords(20) lot!: string;
@@ -45,23 +42,6 @@ export class BookMemoRequest {
   @Optional() @IsWords(400) releaseReason?: string;
   @IsArray()
   @ArrayMinSize(1, { message: 'A memo needs at least one line.' })
-  @ArrayMaxSize(500)
-  @ValidateNested({ each: true })
-  @Type(() => MemoLineRequest)
-  lines!: MemoLineRequest[];
-}
-
-export class DraftRequest {
-  /** As typed, whatever state it is in. */
-  @IsObject({ message: 'A draft holds what was typed.' }) body!: Record<string, unknown>;
-  @Optional() @IsWords(20) party?: string;
-}
-
-export class ReadLineRequest {
-  @IsWords(200) text!: string;
-  @Optional() @IsWords(20) party?: string;
-  /** Lots already on the draft, with what of them. */
-  @IsArray()
   @ArrayMaxSize(500)
   @ValidateNested({ each: true })
   @Type(() => MemoLineRequest)
@@ -129,60 +109,6 @@ export class KeepRequest {
 export class WordsRequest {
   @IsWords(2000) words!: string;
   @Optional() @IsBoolean() isTheirs?: boolean;
-}
-
-/** What Enter would do with a scan line. */
-export interface ReadLine {
-  line?: DraftLine;
-  /** In words, at the right of the field. */
-  says: string;
-  refusal?: { sentence: string; path: string | null; pathWords: string | null };
-  warnings: string[];
-}
-
-/** A line as the memo page shows it while it is written; weights in thousandths, money in minor units. */
-export interface DraftLine {
-  lot: string;
-  what: string;
-  kind: 'stone' | 'pair' | 'parcel';
-  isEstimated: boolean;
-  pieces: number;
-  weight: number;
-  free: number;
-  placeId: string;
-  placeWords: string;
-  price: number | null;
-  sum: number | null;
-  pricedWeight: number;
-  amount: number;
-  after: Bar;
-}
-
-export interface MemoPreview {
-  exposure: Exposure;
-  openMemos: { number: string; weight: number; value: number }[];
-  thisMemo: number;
-  after: number;
-  overBy: number;
-  overMemoBy: number;
-  lapsed: string | null;
-  /** Consigned goods on it that are due back to their owner before this memo ends. */
-  cautions: string[];
-  /** Weight the last parcel line could keep to stay inside, thousandths of a carat. */
-  cutLastTo: number | null;
-  owners: string[];
-  keeps: { sent: number; kept: number; memos: number; daysOut: number | null; differences: number };
-}
-
-export interface DraftRow {
-  id: string;
-  party: string | null;
-  by: string;
-  at: string;
-  lines: number;
-  waitsBecause: string;
-  body: Record<string, unknown>;
-  version: number;
 }
 
 /** Flows of a memo, thousandths of a carat: what is out, came back, was kept, is missing, was restated, was sent. */
