@@ -1,7 +1,7 @@
 import { IsArray, ArrayMaxSize, ArrayMinSize, IsIn, ValidateNested } from 'class-validator';
 import { Type } from 'class-transformer';
 
-import { IsDay, IsPieces, IsReading, IsWords, Optional } from './fields.js';
+import { IsDay, IsPieces, IsReading, IsWeight, IsWords, Optional } from './fields.js';
 import { TransferLine } from './lots.js';
 
 /** One Enter at the return desk: what was read of one line. */
@@ -10,6 +10,10 @@ export class WeighBackRequest {
   @IsReading() weight!: number;
   /** Counted; an estimated parcel's pieces follow its weight where left out. */
   @Optional() @IsPieces(0) pieces?: number;
+  /** What of a parcel comes back this time; the rest stays out. All that is out where left out. */
+  @Optional() @IsWeight() expected?: number;
+  /** Its pieces; of an estimated parcel they follow the weight where left out. */
+  @Optional() @IsPieces() expectedPieces?: number;
   @Optional() @IsWords(60) reportRead?: string;
   /** Where reading or number disagree: whose stone lies on the balance. */
   @Optional() @IsIn(['ours', 'not ours', 'not found']) decision?: 'ours' | 'not ours' | 'not found';

@@ -7,8 +7,7 @@ import type { Weighed } from './weighed.js';
 
 /** The act that an outcome posts. */
 export async function returnAct(ctx: Context, weighed: Weighed): Promise<Act> {
-  const { line, request, judged } = weighed;
-  const out = { weight: line.flows.out, pieces: line.outPieces };
+  const { line, coming: out, request, judged } = weighed;
   const desk = { kind: 'return desk' } as const;
   const back = { kind: 'memo return', weighings: readings(weighed) };
   const differing = {
@@ -56,23 +55,22 @@ function readings({ line, request, judged }: Weighed, difference?: string): Act[
   ];
 }
 
-function differenceOf({ line, request, judged }: Weighed, kind: string): NewDifference {
+function differenceOf({ line, coming, request, judged }: Weighed, kind: string): NewDifference {
   return {
     ref: 'd',
     lot: line.line.lot,
     lineId: line.line.lineId,
     kind,
-    expectedWeight: line.flows.out,
+    expectedWeight: coming.weight,
     foundWeight: request.weight,
-    expectedPieces: line.outPieces,
+    expectedPieces: coming.pieces,
     foundPieces: judged.pieces,
   };
 }
 
-function shortLegs({ line, request, judged }: Weighed): Legs {
-  const [out, outPieces] = [line.flows.out, line.outPieces];
-  const back = { weight: Math.min(request.weight, out), pieces: judged.pieces };
-  const gone = { weight: out - back.weight, pieces: outPieces - back.pieces };
+function shortLegs({ line, coming, request, judged }: Weighed): Legs {
+  const back = { weight: Math.min(request.weight, coming.weight), pieces: judged.pieces };
+  const gone = { weight: coming.weight - back.weight, pieces: coming.pieces - back.pieces };
   return together(
     ...(back.weight > 0 ? [bringBack(line.line, { kind: 'return desk' }, back)] : []),
     miss(line.line, { new: 'd' }, gone),

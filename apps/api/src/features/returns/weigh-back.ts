@@ -2,10 +2,12 @@ import { WeighBackRequest, type WeighedBack } from '@foldwell/contracts';
 import type { Request } from 'express';
 
 import { readBody } from '../../http/body.js';
-import { RuleBroken, ValidationFailed } from '../../http/errors.js';
+import { RuleBroken } from '../../http/errors.js';
 import type { Answer, Context } from '../../http/route.js';
+import { refuseOutOfStep } from '../ledger/in-step.js';
 import { answeredBefore, type Key, keyOf, postAct } from '../ledger/post-act.js';
 import { findMemo, lineOf } from '../memos/find-memo.js';
+import { comingBack } from './coming.js';
 import { type Expected, judgeReading } from './judge-reading.js';
 import { returnAct } from './return-act.js';
 import { asks, says } from './said-at-desk.js';
@@ -27,6 +29,10 @@ export async function weighBackLine(
 ): Promise<WeighedBack> {
   const before = await answeredBefore(ctx, key);
   if (before) return weighedBefore(ctx, before);
+  await refuseOutOfStep(ctx, [
+    { field: 'weight', weight: request.weight },
+    { field: 'expected', weight: request.expected ?? 0 },
+  ]);
   const memo = await findMemo(ctx, number);
   const line = lineOf(memo, request.lot);
   if (line.flows.out === 0)
@@ -35,17 +41,14 @@ export async function weighBackLine(
       `${line.lot} is settled on M ${memo.number}; nothing of it is still out.`,
     );
   const rules = await rulesOf(ctx, memo.id);
-  if (request.weight % rules.step !== 0)
-    throw new ValidationFailed([
-      { field: 'weight', message: 'Three decimals; this house’s balance reads to 0.01 ct.' },
-    ]);
+  const coming = comingBack(line, request);
   const expected: Expected = {
     ...rules,
     kind: line.lotKind,
     isEstimated: line.isEstimated,
     report: line.report,
-    out: line.flows.out,
-    outPieces: line.outPieces,
+    out: coming.weight,
+    outPieces: coming.pieces,
     restated: line.flows.restated,
   };
   const judged = judgeReading(expected, request);
@@ -53,24 +56,23 @@ export async function weighBackLine(
   const written = await postAct(ctx, key, {
     memoId: memo.id,
     businessDate: request.businessDate,
-    ...(await returnAct(ctx, { memoId: memo.id, line, request, judged })),
+    ...(await returnAct(ctx, { memoId: memo.id, line, coming, request, judged })),
   });
   return {
     weighing: written.weighings[0] ?? 0,
     outcome: judged.outcome,
-    says: says(judged.outcome, request.weight - line.flows.out),
+    says: says(judged.outcome, request.weight - coming.weight),
   };
 }
 
 interface Rules {
   stoneTolerance: number;
   parcelTolerance: number;
-  step: number;
 }
 
 async function rulesOf({ db }: Context, memoId: number): Promise<Rules> {
   const [rules] = await db.query<Rules[]>(
-    'SELECT stone_tolerance AS "stoneTolerance", parcel_tolerance AS "parcelTolerance", step FROM memo WHERE id = $1',
+    'SELECT stone_tolerance AS "stoneTolerance", parcel_tolerance AS "parcelTolerance" FROM memo WHERE id = $1',
     [memoId],
   );
   return rules as Rules;

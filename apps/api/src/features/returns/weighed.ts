@@ -1,4 +1,5 @@
 import type { WeighBackRequest } from '@foldwell/contracts';
+import type { Quantity } from '@foldwell/ledger';
 
 import type { findMemo } from '../memos/find-memo.js';
 import type { Judged } from './judge-reading.js';
@@ -10,6 +11,8 @@ export type FoundLine = Awaited<ReturnType<typeof findMemo>>['lines'][number];
 export interface Weighed {
   memoId: number;
   line: FoundLine;
+  /** What is to come back this time, of what is out. */
+  coming: Quantity;
   request: WeighBackRequest;
   judged: Judged;
 }
