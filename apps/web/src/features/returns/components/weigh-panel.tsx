@@ -1,5 +1,5 @@
 import type { MemoDetail, MemoLine, WeighedBack } from '@foldwell/contracts';
-import { formatCarats, formatPoints, readCarats, readPieces } from '@foldwell/quantities';
+import { formatCarats, formatPoints } from '@foldwell/quantities';
 import { useQueryClient } from '@tanstack/react-query';
 import { type FormEvent, useEffect, useRef, useState } from 'react';
 
@@ -8,8 +8,8 @@ import { Refused } from '../../../components/refused';
 import { api } from '../../../lib/api-client';
 import { useBookingKey, useKept } from '../../../lib/kept';
 import { useMe } from '../../../lib/session';
-
-const EMPTY = { found: '', pieces: '', report: '' };
+import { EMPTY_FORM, readWeighForm } from './weigh-form';
+import { WhoseStone } from './whose-stone';
 
 /** One line on the balance: what is read is posted with each Enter; a stone that disagrees is asked about first. */
 export function WeighPanel({
@@ -25,7 +25,7 @@ export function WeighPanel({
     house: { step },
   } = useMe();
   const client = useQueryClient();
-  const [form, change, forget] = useKept(`weigh ${memo.number} ${line.lot}`, EMPTY);
+  const [form, change, forget] = useKept(`weigh ${memo.number} ${line.lot}`, EMPTY_FORM);
   const [asks, setAsks] = useState<WeighedBack | null>(null);
   const [error, setError] = useState<unknown>();
   const [problem, setProblem] = useState<string>();
@@ -35,33 +35,24 @@ export function WeighPanel({
     input.current?.focus();
   }, []);
   const isStone = line.lotKind !== 'parcel';
-  const reading =
-    form.found.trim() === ''
-      ? null
-      : /^0+([.,]0+)?$/.test(form.found.trim())
-        ? { kind: 'ok' as const, value: 0 }
-        : readCarats(form.found, step, 'Found');
-  const off = reading?.kind === 'ok' ? reading.value - line.flows.out : null;
+  const read = readWeighForm(form, line, step);
+  const { found, coming, rest } = read;
+  const off = found === null ? null : found - coming.weight;
   const post = async (decision?: 'ours' | 'not ours' | 'not found') => {
     setError(undefined);
     setProblem(undefined);
-    if (!reading && decision !== 'not found') return setProblem('Type what the balance reads.');
-    if (reading && reading.kind !== 'ok') return setProblem(reading.why);
-    const pieces =
-      form.pieces.trim() === ''
-        ? null
-        : form.pieces.trim() === '0'
-          ? { kind: 'ok' as const, value: 0 }
-          : readPieces(form.pieces);
-    if (pieces && pieces.kind !== 'ok') return setProblem(pieces.why);
+    if (read.why) return setProblem(read.why);
+    if (found === null && decision !== 'not found')
+      return setProblem('Type what the balance reads.');
     try {
       const outcome = await api<WeighedBack>(`/memos/${memo.number}/returns`, {
         method: 'POST',
         key,
         body: {
           lot: line.lot,
-          weight: reading?.value ?? 0,
-          ...(pieces && { pieces: pieces.value }),
+          weight: found ?? 0,
+          ...(read.pieces !== null && { pieces: read.pieces }),
+          ...(rest.weight > 0 && { expected: coming.weight, expectedPieces: coming.pieces }),
           ...(form.report.trim() && { reportRead: form.report.trim() }),
           ...(decision && { decision }),
         },
@@ -76,14 +67,18 @@ export function WeighPanel({
       setError(refusal);
     }
   };
-  const keepAll = async () => {
+  const kept = rest.weight > 0 ? rest : coming;
+  const keepIt = async () => {
+    setProblem(read.why ?? undefined);
+    if (read.why) return;
     try {
       await api(`/memos/${memo.number}/keep`, {
         method: 'POST',
         key,
-        body: { lines: [{ lot: line.lot, weight: line.flows.out, pieces: line.outPieces }] },
+        body: { lines: [{ lot: line.lot, ...kept }] },
       });
       nextKey();
+      change({ coming: '', comingPieces: '' });
       await client.invalidateQueries();
     } catch (refusal) {
       nextKey(refusal);
@@ -111,7 +106,7 @@ export function WeighPanel({
         <div>
           <span className="tiny">Expected</span>
           <br />
-          <b>{formatCarats(line.flows.out)}</b>
+          <b>{formatCarats(coming.weight)}</b>
           <span className="unit">ct</span>
         </div>
         <div>
@@ -124,7 +119,7 @@ export function WeighPanel({
                 : ''
             }
           >
-            {reading?.kind === 'ok' ? formatCarats(reading.value) : '–'}
+            {found === null ? '–' : formatCarats(found)}
           </b>
           <span className="unit">ct</span>
         </div>
@@ -158,7 +153,7 @@ export function WeighPanel({
           isNumber
           value={form.pieces}
           onValue={(pieces) => change({ pieces })}
-          placeholder={String(line.outPieces)}
+          placeholder={String(coming.pieces)}
         />
         {isStone && (
           <Field
@@ -172,33 +167,39 @@ export function WeighPanel({
           />
         )}
       </div>
-      {asks && (
-        <div className="note warn grid gap-2" role="alertdialog" aria-label="Whose stone is it">
-          <h3 className="red">{asks.says}</h3>
-          <div className="answers">
-            <button type="button" onClick={() => void post('ours')}>
-              <b>Ours, weighs otherwise</b>
-              <span className="soft">whole to quarantine</span>
-            </button>
-            <button type="button" onClick={() => void post('not ours')}>
-              <b>Not ours</b>
-              <span className="soft">suspected switch; ours stays on the memo</span>
-            </button>
-          </div>
-          <p className="tiny">
-            Suspected, not proven: seal it, call a second witness, speak to insurer and counsel
-            before accusing.
-          </p>
+      {!isStone && (
+        <div className="grid grid-cols-2 gap-3">
+          <Field
+            label="Comes back now, the rest stays out"
+            unit="ct"
+            isNumber
+            value={form.coming}
+            onValue={(text) => change({ coming: text })}
+            placeholder={formatCarats(line.flows.out)}
+          />
+          {!line.isEstimated && (
+            <Field
+              label="Pieces of it"
+              unit="pcs"
+              isNumber
+              value={form.comingPieces}
+              onValue={(comingPieces) => change({ comingPieces })}
+              placeholder={String(line.outPieces)}
+            />
+          )}
         </div>
       )}
+      {asks && <WhoseStone asks={asks} onTell={(decision) => void post(decision)} />}
       <Refused error={error} />
       <button type="submit" className="btn primary justify-self-start">
         Take and next <kbd>Enter</kbd>
       </button>
       <div className="answers pt-2">
-        <button type="button" onClick={() => void keepAll()}>
+        <button type="button" onClick={() => void keepIt()}>
           <b>Customer keeps</b>
-          <span className="soft">all that is out, {formatCarats(line.flows.out)} ct</span>
+          <span className="soft">
+            {rest.weight > 0 ? 'the rest' : 'all that is out'}, {formatCarats(kept.weight)} ct
+          </span>
         </button>
         {isStone && (
           <button type="button" onClick={() => void post('not found')}>
