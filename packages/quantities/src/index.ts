@@ -2,6 +2,7 @@ export * from './code128.js';
 export * from './dates.js';
 export * from './exact-integer.js';
 export * from './gs1.js';
+export * from './grouped.js';
 export * from './marks.js';
 export * from './money/format-money.js';
 export * from './money/half-away-from-zero.js';

@@ -1,11 +1,14 @@
 import type { FirstLight } from '@foldwell/contracts';
-import { formatCarats, formatPoints } from '@foldwell/quantities';
+import { formatCarats, formatPoints, grouped } from '@foldwell/quantities';
 import type { Request } from 'express';
 
 import { type Answer, type Context, type Route, STAFF } from '../../http/route.js';
 import { houseToday } from '../lots/list-lots.js';
 import { memoRows } from '../memos/memo-rows.js';
 import { differenceRows } from '../returns/difference-rows.js';
+
+/** `1,104 lots`, `1 lot`. */
+const count = (n: number, word: string) => `${grouped(String(n))} ${word}${n === 1 ? '' : 's'}`;
 
 /** The arrival page: the house's bar adds up to the whole, and what needs a hand today. */
 async function firstLight(_req: Request, { db }: Context): Promise<Answer> {
@@ -41,10 +44,10 @@ async function firstLight(_req: Request, { db }: Context): Promise<Answer> {
       missing: n('missing'),
     },
     under: {
-      safe: `${n('safe_lots')} lots in ${n('safes')} safes${n('quarantine') > 0 ? `, ${n('quarantine')} in quarantine` : ''}`,
-      out: `${memos.length} memos, ${customers} customers`,
-      returned: `${n('desk_lots')} lots on the return desk`,
-      sold: `${n('sold_lots')} lots kept or sold`,
+      safe: `${count(n('safe_lots'), 'lot')} in ${count(n('safes'), 'safe')}${n('quarantine') > 0 ? `, ${n('quarantine')} in quarantine` : ''}`,
+      out: `${count(memos.length, 'memo')}, ${count(customers, 'customer')}`,
+      returned: `${count(n('desk_lots'), 'lot')} on the return desk`,
+      sold: `${count(n('sold_lots'), 'lot')} kept or sold`,
       missing: differences.length === 0 ? 'nothing to answer' : `${differences.length} to answer`,
       whole: `taken in ${formatCarats(n('whole') - n('restated'))}, ${n('restated') < 0 ? 'restated or lost' : 'restated'} ${n('restated') === 0 ? '0 pt' : formatPoints(n('restated'))}`,
     },
