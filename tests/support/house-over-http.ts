@@ -7,7 +7,7 @@ import { makeDataSource } from '../../apps/api/src/database/data-source.js';
 import { buildServer } from '../../apps/api/src/server.js';
 import { freshDatabase, type TestDatabase } from './database.js';
 
-const SECRET = 'test session secret of enough length';
+export const SECRET = 'test session secret of enough length';
 export const FIRST_PASSWORD = 'first words that were given';
 export const OWN_PASSWORD = 'own words chosen afterwards';
 

@@ -42,7 +42,7 @@ export async function makeTestCluster(): Promise<TestCluster & { remove: () => P
 }
 
 /** Runs the program that people run, from its source. */
-function migrate(ownerUrl: string): void {
+export function migrate(ownerUrl: string): void {
   const env = {
     ...process.env,
     OWNER_DATABASE_URL: ownerUrl,
