@@ -149,6 +149,12 @@ describe('weights that the balance can’t read', () => {
       const refused = await house.people.owner.post(`/api/memos/${number}/${act}`, body);
       expect([act, refused.status, refused.body.code]).toEqual([act, 400, 'fields']);
     }
+    const line = { lot: parcel, from: house.drawer, weight: 1005, pieces: 50 };
+    for (const path of ['/api/transfers', '/api/put-away']) {
+      const { owner } = house.people;
+      const refused = await owner.post(path, { to: house.drawer, lines: [line] });
+      expect([path, refused.status, refused.body.code]).toEqual([path, 400, 'fields']);
+    }
     expect((await movements()) - before).toBe(1);
   });
 });

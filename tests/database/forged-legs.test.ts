@@ -45,6 +45,16 @@ describe('the writer refuses what a caller made up', () => {
     expect(await house.refusal({ kind: 'transfer', ...act })).toBe('balance_not_enough');
   });
 
+  it('a weight that the house’s balance can’t read', async () => {
+    const act = house.move(
+      house.parcel,
+      { id: house.drawer },
+      { kind: 'return desk' },
+      { weight: 1005, pieces: 10 },
+    );
+    expect(await house.refusal({ kind: 'transfer', ...act })).toBe('movement_weight_in_step');
+  });
+
   it('goods that are out already, sent again', async () => {
     const act = house.move(
       house.stone,

@@ -47,8 +47,8 @@ export class WritingHouse {
     await Promise.all([owner.connect(), api.connect()]);
     await owner.query(`
       INSERT INTO person (email, name, roles) VALUES ('a@example.test', 'Ada', '{owner}'), ('b@example.test', 'Ben', '{owner}');
-      INSERT INTO house (name, zone, base_currency, price_currency, books_currency)
-        VALUES ('House', 'UTC', 'USD', 'USD', 'USD');
+      INSERT INTO house (name, zone, base_currency, price_currency, books_currency, step)
+        VALUES ('House', 'UTC', 'USD', 'USD', 'USD', 1);
       INSERT INTO party (number, name, is_customer, is_supplier, currency, credit_limit)
         VALUES (take_customer_number(), 'Party', true, true, 'USD', 100000000000);
       INSERT INTO place (kind, name, safe) VALUES ('drawer', '1', 'A'), ('show', 'window', 'A');

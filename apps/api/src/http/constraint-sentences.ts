@@ -34,6 +34,7 @@ const LEDGER: Record<string, Sentence> = {
   movement_has_two_legs: 'A booking needs goods that go from one place to another.',
   movement_legs_fit_kind: ({ kind, place }) => `A ${kind} can’t touch ${place ?? 'that place'}.`,
   movement_cost_fits_kind: ({ kind }) => `Cost can’t go that way in a ${kind ?? 'booking'}.`,
+  movement_weight_in_step: 'A weight has three decimals; this house’s balance reads to 0.01 ct.',
   movement_says_something: 'There is nothing in it to book.',
   movement_person_active: 'You are no longer active in this house.',
   movement_reason_where_due: 'A reason is needed.',

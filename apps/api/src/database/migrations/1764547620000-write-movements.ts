@@ -310,6 +310,9 @@ BEGIN
     ELSE
       legs := resolve_legs(p_act, lots, places, differences, memo_made);
       PERFORM judge_legs(v_kind, legs);
+      IF EXISTS (SELECT 1 FROM unnest(legs) l, house h WHERE l.weight % h.step <> 0) THEN
+        PERFORM refuse('movement_weight_in_step');
+      END IF;
       legs := reckon_legs(legs, p_act -> 'pools');
     END IF;
     IF v_kind = 'memo void' AND EXISTS (SELECT 1 FROM memo_line n WHERE n.memo_id = v_memo AND (

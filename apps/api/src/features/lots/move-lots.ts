@@ -5,6 +5,7 @@ import type { Request } from 'express';
 import { readBody } from '../../http/body.js';
 import { NotFound, RuleBroken } from '../../http/errors.js';
 import type { Answer, Context } from '../../http/route.js';
+import { refuseOutOfStep, weightsOf } from '../ledger/in-step.js';
 import { type Key, keyOf, postAct } from '../ledger/post-act.js';
 import type { Act, Written } from '../ledger/act.js';
 
@@ -27,6 +28,7 @@ export async function moveLines(
     reason?: string | undefined;
   },
 ): Promise<Written> {
+  await refuseOutOfStep(ctx, weightsOf(act.lines));
   const lots = await lotIds(
     ctx,
     act.lines.map((line) => line.lot),

@@ -235,7 +235,7 @@ export const guards: string[] = [
   'function time_dist 570a6afc9272',
   'function ts_dist cd9d836b7dd4',
   'function tstz_dist d9abd396677b',
-  'function write_movement d758f27f59f4',
+  'function write_movement 1f502e5f87a6',
   'index PK_8c82d7f526340ab734260ea46be 8bb083e52740',
   'index audit_pkey 88c1e93ffad2',
   'index balance_pkey 37d8ca6d4dbe',
