@@ -118,6 +118,37 @@ describe('a request sent twice', () => {
   });
 });
 
+describe('what a customer keeps', () => {
+  it('at a price of its own and then not after all leaves no cent and no piece', async () => {
+    const [parcel = ''] = await house.takeIn({ ...PARCEL });
+    const party = (
+      await house.people.owner.post('/api/parties', { name: 'Keeper', isCustomer: true })
+    ).body.number;
+    const booked = await house.people.dealer.post('/api/memos', {
+      ...house.memoOf([{ lot: parcel, weight: 4000, pieces: 200 }]),
+      party,
+    });
+    const { number } = booked.body;
+    const post = (act: string, line: object) =>
+      house.people.bookkeeper.post(`/api/memos/${number}/${act}`, {
+        lines: [{ lot: parcel, ...line }],
+      });
+    const exposure = async () =>
+      (await house.people.dealer.get(`/api/parties/${party}`)).body.exposure;
+    expect(await exposure()).toMatchObject({ onMemo: 400_000, kept: 0 });
+    await post('keep', { weight: 1000, pieces: 50, price: 90_001 });
+    await post('keep', { weight: 500, pieces: 25, sum: 44_444 });
+    expect(await exposure()).toMatchObject({ onMemo: 250_000, kept: 134_445 });
+    const more = await post('un-keep', { weight: 1510, pieces: 75 });
+    expect([more.status, more.body.detail]).toEqual([409, `Only 1.50 ct of ${parcel} is kept.`]);
+    await post('un-keep', { weight: 700, pieces: 35 });
+    const [line] = (await house.people.dealer.get(`/api/memos/${number}`)).body.lines;
+    expect(line).toMatchObject({ keptPieces: 40, outPieces: 160, flows: { kept: 800, out: 3200 } });
+    await post('un-keep', { weight: 800, pieces: 40 });
+    expect(await exposure()).toMatchObject({ onMemo: 400_000, kept: 0 });
+  });
+});
+
 describe('weights that the balance can’t read', () => {
   it('are refused with their line, and nothing is booked', async () => {
     const [parcel = ''] = await house.takeIn({ ...PARCEL });

@@ -146,6 +146,7 @@ export interface MemoLine {
   isEstimated: boolean;
   sentPieces: number;
   outPieces: number;
+  keptPieces: number;
   flows: MemoFlows;
   price: number | null;
   sum: number | null;

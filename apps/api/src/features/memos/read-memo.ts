@@ -114,6 +114,7 @@ interface LineRecord {
   line_id: string;
   sent_pieces: string;
   out_pieces: string;
+  kept_pieces: string;
   price: string | null;
   agreed_sum: string | null;
   priced_weight: string;
@@ -131,7 +132,7 @@ interface LineRecord {
 /** The lines of a memo with what became of each. */
 export async function linesOf(db: DataSource, memoId: string): Promise<MemoLine[]> {
   const records = await db.query<(LineRecord & Parameters<typeof flowsOf>[0])[]>(
-    `SELECT n.id AS line_id, n.sent_pieces, n.out_pieces, n.price, n.agreed_sum, n.priced_weight, n.due::text, n.is_estimated,
+    `SELECT n.id AS line_id, n.sent_pieces, n.out_pieces, n.kept_pieces, n.price, n.agreed_sum, n.priced_weight, n.due::text, n.is_estimated,
        memo_line_amount(n.price, n.agreed_sum, n.priced_weight, n.sent_weight, n.out_weight) AS value_out,
        n.out_weight AS out, n.returned_weight AS returned, n.kept_weight AS kept, n.missing_weight AS missing, n.written_off_weight AS written_off,
        n.converted_weight AS converted, n.restated_weight AS restated, n.sent_weight AS sent,
@@ -153,6 +154,7 @@ export async function linesOf(db: DataSource, memoId: string): Promise<MemoLine[
       isEstimated: record.is_estimated,
       sentPieces: Number(record.sent_pieces),
       outPieces: Number(record.out_pieces),
+      keptPieces: Number(record.kept_pieces),
       flows: flowsOf(record),
       price: record.price === null ? null : Number(record.price),
       sum: record.agreed_sum === null ? null : Number(record.agreed_sum),

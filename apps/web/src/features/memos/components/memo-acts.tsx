@@ -155,7 +155,7 @@ function ActForm({
         const whole =
           act === 'keep'
             ? { weight: line.flows.out, pieces: line.outPieces }
-            : { weight: line.flows.kept, pieces: Math.max(1, line.sentPieces - line.outPieces) };
+            : { weight: line.flows.kept, pieces: line.keptPieces };
         if (!isOne || form.weight.trim() === '') return { lot: line.lot, ...whole, ...price() };
         const weight = readCarats(form.weight, step);
         if (weight.kind !== 'ok') throw new Error(weight.why);
