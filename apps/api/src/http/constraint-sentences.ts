@@ -13,6 +13,8 @@ const LEDGER: Record<string, Sentence> = {
       ? `Only ${carats(has)} of ${lot} is in ${place}; ${carats(asked)} was asked for.`
       : `${lot} is not in ${place} any more.`,
   balance_never_negative: 'There is not that much there. Look again where the goods are.',
+  balance_sold_not_negative: 'More would come back than was sold, or at more than it cost.',
+  memo_line_sent_once: 'A line is sent once. Write another memo for more of it.',
   balance_nothing_left_over:
     'Pieces or cost would be left where no carats are. Move the whole of it.',
   balance_pieces_weigh:

@@ -194,6 +194,9 @@ CREATE TABLE balance (
   CONSTRAINT balance_pkey PRIMARY KEY (lot_id, place_id),
   CONSTRAINT balance_place_known FOREIGN KEY (place_id, place_kind) REFERENCES place (id, kind),
   CONSTRAINT balance_never_negative CHECK (NOT inside OR (weight >= 0 AND pieces >= 0 AND cost >= 0)),
+  -- No more comes back by credit notes than was sold, nor its cost.
+  CONSTRAINT balance_sold_not_negative CHECK (place_kind <> 'sold'
+    OR (weight >= 0 AND pieces >= 0 AND cost >= 0 AND (weight > 0 OR cost = 0))),
   CONSTRAINT balance_nothing_left_over CHECK (NOT inside OR weight > 0
     OR (cost = 0 AND (pieces = 0 OR place_kind = 'missing'))),
   CONSTRAINT balance_pieces_weigh CHECK (NOT inside OR is_estimated OR place_kind = 'missing' OR pieces <= weight),

@@ -271,12 +271,16 @@ BEGIN
   IF NEW.business_date <= locked THEN
     PERFORM refuse('movement_date_after_lock', jsonb_build_object('date', NEW.business_date, 'locked', locked));
   END IF;
-  IF EXISTS (SELECT 1 FROM (SELECT DISTINCT lot_id, place_id FROM posting
-               WHERE movement_id = NEW.id AND place_kind = 'memo') t
+  -- Wherever a leg lies that names a line, the place of that line's memo must hold what is still out.
+  IF EXISTS (SELECT 1 FROM (SELECT g.lot_id, g.place_id FROM posting g
+               WHERE g.movement_id = NEW.id AND g.place_kind = 'memo'
+               UNION SELECT g.lot_id, p.id FROM posting g JOIN memo_line n ON n.id = g.memo_line_id
+               JOIN place p ON p.memo_id = n.memo_id AND p.kind = 'memo' WHERE g.movement_id = NEW.id) t
              JOIN place p ON p.id = t.place_id
-             JOIN balance b ON b.lot_id = t.lot_id AND b.place_id = t.place_id
+             LEFT JOIN balance b ON b.lot_id = t.lot_id AND b.place_id = t.place_id
              LEFT JOIN memo_line n ON n.memo_id = p.memo_id AND n.lot_id = t.lot_id
-             WHERE b.weight <> coalesce(n.out_weight, 0) OR b.pieces <> coalesce(n.out_pieces, 0)) THEN
+             WHERE coalesce(b.weight, 0) <> coalesce(n.out_weight, 0)
+               OR coalesce(b.pieces, 0) <> coalesce(n.out_pieces, 0)) THEN
     PERFORM refuse('memo_place_is_its_lines');
   END IF;
   IF EXISTS (SELECT 1 FROM posting g JOIN memo_line n ON n.id = g.memo_line_id
@@ -291,6 +295,11 @@ BEGIN
                coalesce(sum(d.held_pieces), 0) AS pieces FROM difference d WHERE d.lot_id = t.lot_id) h
              WHERE b.weight <> h.weight OR b.pieces <> h.pieces) THEN
     PERFORM refuse('missing_is_open_differences');
+  END IF;
+  -- What is sent is sent by its own paper, judged against the limits; nothing is added to it after.
+  IF NEW.kind = 'memo out' AND EXISTS (SELECT 1 FROM posting g JOIN posting e ON e.memo_line_id = g.memo_line_id
+             WHERE g.movement_id = NEW.id AND g.flow = 'sent' AND e.flow = 'sent' AND e.movement_id <> NEW.id) THEN
+    PERFORM refuse('memo_line_sent_once');
   END IF;
   IF NEW.kind = 'reversal' THEN PERFORM judge_reversal(NEW); END IF;
   RETURN NULL;

@@ -15,7 +15,7 @@ export class ReckonCosts1764547560000 implements MigrationInterface {
 
   async down(db: QueryRunner): Promise<void> {
     await db.query(`
-      DROP FUNCTION reckon_legs, judge_legs, party_exposure, memo_line_amount, convert_money, rate_on, half_away;
+      DROP FUNCTION reckon_legs, judge_legs, party_exposure, memo_line_came_back_off, memo_line_amount, convert_money, rate_on, half_away;
       DROP TYPE leg;
       DROP TABLE movement_rule;
     `);
@@ -33,6 +33,17 @@ CREATE FUNCTION memo_line_amount(price bigint, agreed_sum bigint, priced_weight 
   RETURN CASE WHEN sent_weight = 0 OR w = 0 THEN 0
     WHEN agreed_sum IS NOT NULL THEN half_away(agreed_sum::numeric * w, sent_weight)
     ELSE half_away(price::numeric * priced_weight * w, sent_weight::numeric * 1000) END;
+
+/*
+ * By how much a line's weight was restated as it came back; signed, found less counts as given up.
+ * What an answer accepted later is no part of it.
+ */
+CREATE FUNCTION memo_line_came_back_off(p_line bigint) RETURNS bigint LANGUAGE sql STABLE
+SET search_path = pg_catalog, public, pg_temp AS $$
+  SELECT coalesce(sum(CASE WHEN g.place_kind = 'memo' THEN -g.weight ELSE g.weight END), 0)::bigint
+  FROM posting g JOIN movement m ON m.id = g.movement_id LEFT JOIN movement u ON u.id = m.reverses
+  WHERE g.memo_line_id = p_line AND g.flow = 'restated' AND 'memo return' IN (m.kind, u.kind)
+$$;
 
 /* Base-currency units for one unit of a currency, by the newest rate up to a day; 1 for the base. */
 CREATE FUNCTION rate_on(code text, day date) RETURNS numeric LANGUAGE sql STABLE
@@ -71,45 +82,45 @@ CREATE TABLE movement_rule (
   kind text CONSTRAINT movement_rule_pkey PRIMARY KEY,
   giving text[] NOT NULL,
   taking text[] NOT NULL,
-  -- A cost named by the caller, on a boundary place only (a price paid, a fee, a write-down).
-  may_name_cost boolean NOT NULL DEFAULT false,
+  -- Boundary places at which the caller names a cost (a price paid, a fee, a write-down).
+  naming text[] NOT NULL,
   -- Weight may leave without its cost (restated or lost on the lot: the rest takes all).
   may_leave_cost boolean NOT NULL DEFAULT false
 );
-INSERT INTO movement_rule (kind, giving, taking, may_name_cost, may_leave_cost)
+INSERT INTO movement_rule (kind, giving, taking, naming, may_leave_cost)
 SELECT kind, string_to_array(replace(giving, 'own', own), ','), string_to_array(replace(taking, 'own', own), ','),
-  named, leaves
+  string_to_array(named, ','), leaves
 FROM (SELECT 'drawer,show,person,return desk,quarantine,laboratory,workshop') o(own), (VALUES
-  ('opening', 'supplier', 'own', true, false),
-  ('purchase', 'supplier', 'own', true, false),
-  ('consignment in', 'memo in', 'own', false, false),
-  ('bought from consignor', 'own,memo,kept,missing,conversion,supplier', 'own,memo,kept,missing,conversion,loss', true, false),
-  ('return to consignor', 'own', 'memo in', false, false),
-  ('return to supplier', 'own', 'supplier', false, false),
-  ('transfer', 'own', 'own', false, false),
-  ('memo out', 'own,memo', 'memo', false, false),
-  ('memo return', 'memo,loss', 'return desk,quarantine,missing,loss', false, true),
-  ('memo void', 'memo', 'own', false, false),
-  ('put away', 'return desk,quarantine', 'own', false, false),
-  ('kept', 'memo', 'kept', false, false),
-  ('un-kept', 'kept', 'memo', false, false),
-  ('sale', 'own,kept,conversion,supplier', 'sold,conversion,kept,own', true, false),
-  ('credit return', 'sold', 'own', true, false),
-  ('difference opened', 'memo,own', 'missing,quarantine', false, false),
-  ('difference answered', 'missing,loss,own,memo,memo in,supplier,conversion', 'kept,loss,own,memo,conversion,sold', true, true),
-  ('restatement', 'loss,own', 'loss,own', false, true),
-  ('conversion', 'own,memo,conversion', 'own,memo,conversion,loss', false, true),
-  ('recut', 'own,charges', 'own,loss', true, true),
-  ('laboratory out', 'own', 'laboratory', false, false),
-  ('laboratory back', 'laboratory,charges', 'own', true, false),
-  ('workshop out', 'own', 'workshop', false, false),
-  ('workshop back', 'workshop,charges', 'own', true, false),
-  ('charge', 'charges', 'own,memo,charges', true, false),
-  ('write-down', 'own,memo,kept', 'loss', true, false),
-  ('count adjustment', 'loss,own', 'loss,own,missing', false, true),
-  ('write-off', 'own,missing,memo', 'loss', false, false),
-  ('found again', 'missing,loss', 'own', false, false),
-  ('correction', 'supplier,memo in,own,memo,kept,charges', 'supplier,memo in,own,memo,kept,charges', true, true)
+  ('opening', 'supplier', 'own', 'supplier', false),
+  ('purchase', 'supplier', 'own', 'supplier', false),
+  ('consignment in', 'memo in', 'own', '', false),
+  ('bought from consignor', 'own,memo,kept,missing,conversion,supplier', 'own,memo,kept,missing,conversion,loss', 'supplier', false),
+  ('return to consignor', 'own', 'memo in', '', false),
+  ('return to supplier', 'own', 'supplier', '', false),
+  ('transfer', 'own', 'own', '', false),
+  ('memo out', 'own,memo', 'memo', '', false),
+  ('memo return', 'memo,loss', 'return desk,quarantine,missing,loss', '', true),
+  ('memo void', 'memo', 'own', '', false),
+  ('put away', 'return desk,quarantine', 'own', '', false),
+  ('kept', 'memo', 'kept', '', false),
+  ('un-kept', 'kept', 'memo', '', false),
+  ('sale', 'own,kept,conversion,supplier', 'sold,conversion,kept,own', 'supplier', false),
+  ('credit return', 'sold', 'own', 'sold', false),
+  ('difference opened', 'memo,own', 'missing,quarantine', '', false),
+  ('difference answered', 'missing,loss,own,memo,memo in,supplier,conversion', 'kept,loss,own,memo,conversion,sold', 'supplier', true),
+  ('restatement', 'loss,own', 'loss,own', '', true),
+  ('conversion', 'own,memo,conversion', 'own,memo,conversion,loss', '', true),
+  ('recut', 'own,charges', 'own,loss', 'charges', true),
+  ('laboratory out', 'own', 'laboratory', '', false),
+  ('laboratory back', 'laboratory,charges', 'own', 'charges', false),
+  ('workshop out', 'own', 'workshop', '', false),
+  ('workshop back', 'workshop,charges', 'own', 'charges', false),
+  ('charge', 'charges', 'own,memo,charges', 'charges', false),
+  ('write-down', 'own,memo,kept', 'loss', 'loss', false),
+  ('count adjustment', 'loss,own', 'loss,own,missing', '', true),
+  ('write-off', 'own,missing,memo', 'loss', '', false),
+  ('found again', 'missing,loss', 'own', '', false),
+  ('correction', 'supplier,memo in,own,memo,kept,charges', 'supplier,memo in,own,memo,kept,charges', 'supplier', true)
 ) AS r(kind, giving, taking, named, leaves);
 
 CREATE TYPE leg AS (
@@ -133,12 +144,33 @@ BEGIN
     PERFORM refuse('movement_legs_fit_kind', jsonb_build_object('kind', p_kind, 'place', wrong.place_kind));
   END IF;
   SELECT l.* INTO wrong FROM unnest(legs) l
-    WHERE l.how = 'given' AND (l.inside OR NOT rule.may_name_cost)
+    WHERE l.how = 'given' AND NOT l.place_kind = ANY (rule.naming)
       OR l.inside AND l.weight < 0 AND l.how <> 'carried' AND NOT (rule.may_leave_cost AND l.how = 'none')
       OR l.how = 'carried' AND NOT (l.inside AND l.weight <= 0)
       OR l.how NOT IN ('none', 'carried', 'given', 'allotted') OR l.how IS NULL LIMIT 1;
   IF FOUND THEN
     PERFORM refuse('movement_cost_fits_kind', jsonb_build_object('kind', p_kind, 'place', wrong.place_kind));
+  END IF;
+  -- In these a price is paid only for what becomes ours out of a consignor's lot.
+  SELECT l.* INTO wrong FROM unnest(legs) l WHERE l.how = 'given'
+    AND p_kind IN ('sale', 'bought from consignor', 'difference answered') AND NOT EXISTS (
+      SELECT 1 FROM unnest(legs) o WHERE o.lot_id = l.lot_id AND o.place_kind = 'conversion') LIMIT 1;
+  IF FOUND THEN
+    PERFORM refuse('movement_cost_fits_kind', jsonb_build_object('kind', p_kind, 'place', wrong.place_kind));
+  END IF;
+  SELECT l.* INTO wrong FROM unnest(legs) l
+    WHERE p_kind IN ('consignment in', 'return to consignor') AND NOT l.is_consigned
+      OR p_kind IN ('opening', 'purchase', 'return to supplier') AND l.is_consigned
+      OR l.flow = 'sent' AND p_kind NOT IN ('memo out', 'conversion')
+      OR l.place_kind = 'kept' AND p_kind IN ('kept', 'un-kept') AND l.flow IS DISTINCT FROM 'kept' LIMIT 1;
+  IF FOUND THEN
+    PERFORM refuse('movement_legs_fit_kind', jsonb_build_object('kind', p_kind, 'place', wrong.place_kind));
+  END IF;
+  -- A stone, pair or set moves at its ledger weight; only lost or restated weight moves alone.
+  IF p_kind NOT IN ('recut', 'correction', 'difference answered', 'restatement') AND EXISTS (
+      SELECT 1 FROM unnest(legs) l JOIN lot t ON t.id = l.lot_id
+      WHERE l.weight <> 0 AND l.pieces = 0 AND t.fixed_pieces IS NOT NULL) THEN
+    PERFORM refuse('balance_stone_whole');
   END IF;
 END $$;
 `;

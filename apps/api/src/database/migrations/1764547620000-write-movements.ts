@@ -344,8 +344,8 @@ BEGIN
     END IF;
     IF v_kind = 'memo void' THEN UPDATE memo SET void_movement_id = v_movement WHERE id = v_memo; END IF;
     IF v_kind = 'memo return' AND EXISTS (SELECT 1 FROM memo_line n JOIN memo m ON m.id = n.memo_id
-        WHERE m.id = v_memo AND abs(n.restated_weight) > m.parcel_tolerance
-          AND n.id IN (SELECT g.memo_line_id FROM posting g WHERE g.movement_id = v_movement)) THEN
+        WHERE m.id = v_memo AND abs(memo_line_came_back_off(n.id)) > m.parcel_tolerance
+          AND n.id IN (SELECT g.memo_line_id FROM posting g WHERE g.movement_id = v_movement AND g.flow = 'restated')) THEN
       PERFORM refuse('memo_restated_within_tolerance');
     END IF;
     INSERT INTO memo_keep (movement_id, memo_line_id, weight, pieces, price, agreed_sum, amount)

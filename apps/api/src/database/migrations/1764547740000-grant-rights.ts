@@ -29,7 +29,7 @@ export class GrantRights1764547740000 implements MigrationInterface {
       GRANT INSERT (kind, name, safe, purpose, party_id, person_id) ON place TO api;
       GRANT UPDATE (name, safe, purpose, is_closed) ON place TO api;
       GRANT EXECUTE ON FUNCTION write_movement, take_customer_number, house_today, party_exposure, memo_line_amount,
-        convert_money, rate_on, half_away TO api;
+        memo_line_came_back_off, convert_money, rate_on, half_away TO api;
       GRANT EXECUTE ON FUNCTION refuse, keep_lot_identity, keep_by_postings, keep_house_fixed, refuse_change TO api;
       GRANT EXECUTE ON FUNCTION house_today, seal_hash, movement_text, document_text, party_exposure, memo_line_amount,
         convert_money, rate_on, half_away TO reader;

@@ -49,7 +49,7 @@ export async function weighBackLine(
     report: line.report,
     out: coming.weight,
     outPieces: coming.pieces,
-    restated: line.flows.restated,
+    restated: await cameBackOff(ctx, line.line.lineId),
   };
   const judged = judgeReading(expected, request);
   if (judged.outcome === 'asks') return { weighing: 0, outcome: 'asks', says: asks(line, request) };
@@ -63,6 +63,14 @@ export async function weighBackLine(
     outcome: judged.outcome,
     says: says(judged.outcome, request.weight - coming.weight),
   };
+}
+
+/** Restated as it came back, in thousandths of a carat; what an answer accepted later is no part of it. */
+async function cameBackOff({ db }: Context, lineId: number): Promise<number> {
+  const [row] = await db.query<{ off: string }[]>('SELECT memo_line_came_back_off($1) AS off', [
+    lineId,
+  ]);
+  return Number(row?.off);
 }
 
 interface Rules {
