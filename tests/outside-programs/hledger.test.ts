@@ -1,13 +1,11 @@
 import { spawnSync } from 'node:child_process';
-import { fileURLToPath } from 'node:url';
 import Papa from 'papaparse';
 import pg from 'pg';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 
-import { freshDatabase, type TestDatabase } from '../support/database.js';
+import type { TestDatabase } from '../support/database.js';
+import { demoDatabase } from '../support/demo-database.js';
 import { balancesOf, journalOf } from './journal.js';
-
-const ROOT = fileURLToPath(new URL('../../', import.meta.url));
 
 /** hledger is a double-entry ledger of other people's: https://hledger.org. */
 function hledger(journal: string, ...words: string[]) {
@@ -25,20 +23,7 @@ describe('hledger reads the demo house', () => {
   let journal: string;
 
   beforeAll(async () => {
-    database = await freshDatabase();
-    const { api, owner, worker } = database.urls;
-    const env = {
-      ...process.env,
-      DATABASE_URL: api,
-      OWNER_DATABASE_URL: owner,
-      WORKER_DATABASE_URL: worker,
-    };
-    const seed = spawnSync(process.execPath, ['apps/api/dist/seed.mjs'], {
-      cwd: ROOT,
-      env,
-      encoding: 'utf8',
-    });
-    expect(seed.status, seed.stderr).toBe(0);
+    database = await demoDatabase();
     client = new pg.Client({ connectionString: database.urls.reader });
     await client.connect();
     journal = await journalOf(client);
