@@ -13,6 +13,7 @@ import { api } from '../../../lib/api-client';
 import { useKeys, useScanner } from '../../../lib/keys';
 import { useMay, useMe } from '../../../lib/session';
 import { AnswerPanel } from './answer-panel';
+import { readingOf } from './reading-of';
 import { WeighPanel } from './weigh-panel';
 
 /** Weigh back line by line; in tolerance answers itself, the rest becomes a difference. */
@@ -41,7 +42,7 @@ function Desk({ memo }: { memo: MemoDetail }) {
   const [lot, setLot] = useState(
     wanted ?? memo.lines.find((line) => line.flows.out > 0)?.lot ?? memo.lines[0]?.lot ?? '',
   );
-  const [said, setSaid] = useState<WeighedBack | null>(null);
+  const [said, setSaid] = useState<(WeighedBack & { lot: string }) | null>(null);
   const [error, setError] = useState<unknown>();
   const at = Math.max(
     0,
@@ -91,7 +92,8 @@ function Desk({ memo }: { memo: MemoDetail }) {
     'Readings are typed, or come from a scanner',
   );
   const done = (outcome: WeighedBack) => {
-    setSaid(outcome);
+    // The lot it was said of: the desk has moved on to the next by then.
+    setSaid({ ...outcome, lot });
     setError(undefined);
     void client.invalidateQueries();
     if (outcome.outcome === 'agrees' || outcome.outcome === 'restated') {
@@ -170,7 +172,7 @@ function Desk({ memo }: { memo: MemoDetail }) {
                 role="status"
                 aria-live="polite"
               >
-                <b>{lot || ''}</b> {said.says}.
+                <b>{said.lot}</b> {said.says}.
                 {said.weighing > 0 && <span className="quiet"> Reading W {said.weighing}.</span>}
               </div>
             )}
@@ -265,15 +267,7 @@ function Lines({
           const difference = memo.differenceList.find(
             (one) => one.lot === line.lot && one.answer === null,
           );
-          const expected =
-            difference?.expected ??
-            (line.found === null ? line.flows.out : line.flows.sent - line.flows.kept);
-          const off =
-            line.found === null
-              ? null
-              : difference
-                ? difference.found - difference.expected
-                : line.found - expected;
+          const { expected, found, off } = readingOf(line, difference);
           const tolerance = line.lotKind === 'parcel' ? memo.parcelTolerance : memo.stoneTolerance;
           return (
             <tr
@@ -298,7 +292,7 @@ function Lines({
               </td>
               <td className="n">{formatCarats(expected)}</td>
               <td className="n">
-                <b>{line.found === null ? '–' : formatCarats(line.found)}</b>
+                <b>{found === null ? '–' : formatCarats(found)}</b>
               </td>
               <td className={`n ${difference ? 'red' : 'soft'}`}>
                 {off === null ? '–' : formatPoints(off)}
@@ -311,7 +305,9 @@ function Lines({
                 {difference ? (
                   <span className="red">{difference.kind}, to answer</span>
                 ) : line.flows.out > 0 ? (
-                  <span className="quiet">not weighed yet</span>
+                  <span className="quiet">
+                    {line.flows.returned > 0 ? 'the rest is still out' : 'not weighed yet'}
+                  </span>
                 ) : line.flows.restated !== 0 ? (
                   <Agrees>{`restated ${formatPoints(line.flows.restated * -1)}`}</Agrees>
                 ) : line.flows.kept > 0 && line.flows.returned === 0 ? (
