@@ -163,6 +163,15 @@ describe('what the tolerance forgives and what it does not', () => {
     expect(await lotNow(light.lot)).toMatchObject({ out: 2500, returned: 1400, missing: 100 });
   });
 
+  it('a difference accepted on the first part takes nothing of the tolerance of the second', async () => {
+    const out = await parcelOut();
+    const first = await weighedBack(out, { weight: 1400, expected: 1500 });
+    expect((await answer(first.difference.id, { answer: 'accepted' })).status).toBe(201);
+    const second = await weighedBack(out, { weight: 2480 });
+    expect([second.outcome, second.says]).toEqual(['restated', 'inside tolerance, restated −2 pt']);
+    expect(await lotNow(out.lot)).toMatchObject({ out: 0, returned: 3880, cost: 300_000 });
+  });
+
   it('more than is out, a part of a stone, or counted pieces unsaid can’t be expected', async () => {
     const refusal = async (out: { lot: string; memo: string }, reading: object) =>
       (await weighedBack(out, reading)).detail;

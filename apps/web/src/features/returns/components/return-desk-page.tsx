@@ -103,6 +103,7 @@ function Desk({ memo }: { memo: MemoDetail }) {
       if (next) setLot(next.lot);
     }
   };
+  const toLay = line && isOpen(line) ? line : memo.lines.find(isOpen);
   const toWeigh = memo.lines.filter(isOpen).length;
   const toAnswer = memo.differenceList.filter((one) => one.answer === null).length;
   const when = dueWords(memo.due, today);
@@ -205,8 +206,7 @@ function Desk({ memo }: { memo: MemoDetail }) {
         <span>
           {toWeigh > 0 ? (
             <>
-              Next: <b>{memo.lines.find(isOpen)?.lot}</b> {memo.lines.find(isOpen)?.what}. Lay it on
-              the balance, or scan it.
+              Next: <b>{toLay?.lot}</b> {toLay?.what}. Lay it on the balance, or scan it.
             </>
           ) : (
             'All lines are weighed.'
