@@ -68,7 +68,6 @@ function Desk({ memo }: { memo: MemoDetail }) {
       setSaid(null);
     } else setError(new Error(`${text} is not on M ${memo.number}.`));
   });
-  const isOpen = (one: MemoLine) => one.flows.out > 0;
   const close = async () => {
     try {
       const { number } = await api<{ number: string }>(`/memos/${memo.number}/return-slip`, {
@@ -103,7 +102,6 @@ function Desk({ memo }: { memo: MemoDetail }) {
       if (next) setLot(next.lot);
     }
   };
-  const toLay = line && isOpen(line) ? line : memo.lines.find(isOpen);
   const toWeigh = memo.lines.filter(isOpen).length;
   const toAnswer = memo.differenceList.filter((one) => one.answer === null).length;
   const when = dueWords(memo.due, today);
@@ -204,13 +202,7 @@ function Desk({ memo }: { memo: MemoDetail }) {
       </section>
       <section className="foot">
         <span>
-          {toWeigh > 0 ? (
-            <>
-              Next: <b>{toLay?.lot}</b> {toLay?.what}. Lay it on the balance, or scan it.
-            </>
-          ) : (
-            'All lines are weighed.'
-          )}
+          <WhatIsNext lines={memo.lines} current={line} />
         </span>
         <span className="grow" />
         {toAnswer > 0 && <span className="red">{toAnswer} to answer</span>}
@@ -218,6 +210,18 @@ function Desk({ memo }: { memo: MemoDetail }) {
           Close the return, print the slip <kbd>Ctrl Enter</kbd>
         </button>
       </section>
+    </>
+  );
+}
+
+const isOpen = (line: MemoLine) => line.flows.out > 0;
+
+function WhatIsNext({ lines, current }: { lines: MemoLine[]; current: MemoLine | undefined }) {
+  const next = current && isOpen(current) ? current : lines.find(isOpen);
+  if (!next) return 'All lines are weighed.';
+  return (
+    <>
+      Next: <b>{next.lot}</b> {next.what}. Lay it on the balance, or scan it.
     </>
   );
 }
