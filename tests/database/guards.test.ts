@@ -3,7 +3,7 @@ import pg from 'pg';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 
 import { sentenceOf } from '../../apps/api/src/http/constraint-sentences.js';
-import { GUARDS_NOW } from '../../apps/api/src/features/verify/assertions.js';
+import { GUARDS_NOW } from '../../apps/api/src/features/verify/guards-now.js';
 import { guards } from '../../apps/api/src/features/verify/guards.js';
 import { freshDatabase, type TestDatabase } from '../support/database.js';
 

@@ -90,6 +90,32 @@ const TAMPERINGS: [string, string, RegExp][] = [
     `CREATE OR REPLACE FUNCTION judge_movement() RETURNS trigger LANGUAGE plpgsql AS 'BEGIN RETURN NULL; END'`,
     /every guard/,
   ],
+  [
+    'arithmetic rewritten',
+    `CREATE OR REPLACE FUNCTION half_away(n numeric, d numeric) RETURNS numeric LANGUAGE sql IMMUTABLE RETURN div(n, d)`,
+    /every guard.*half_away/,
+  ],
+  [
+    'a trigger that is not ours',
+    `CREATE TRIGGER sneaks_in BEFORE INSERT ON posting FOR EACH ROW EXECUTE FUNCTION refuse_change()`,
+    /not ours: trigger posting.sneaks_in/,
+  ],
+  ['a right given away', `GRANT INSERT ON posting TO api`, /right posting api/],
+  [
+    'what a customer kept at another price',
+    `INSERT INTO memo_keep (movement_id, memo_line_id, weight, pieces, price, amount) VALUES (3, 1, 10, 1, 1, 1)`,
+    /what each line kept/,
+  ],
+  [
+    'a paper of a memo taken out',
+    `INSERT INTO document (kind, number, memo_id, person_id, snapshot, hash) VALUES ('extended memo', 'M 1-2', 1, 1, '{"number": "M 1-2"}', sha256('{"number": "M 1-2"}'))`,
+    /papers of a memo are numbered/,
+  ],
+  [
+    'a paper that waits for no seal',
+    `DELETE FROM seal_member WHERE document_id IS NOT NULL`,
+    /chain of seals|waits to be sealed/,
+  ],
 ];
 
 describe('verify', () => {

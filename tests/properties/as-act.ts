@@ -25,9 +25,9 @@ export function asAct(plan: Plan, ids: Ids): Record<string, unknown> {
     pools,
     ...(more.word !== undefined && { word: more.word }),
     ...(more.reason !== undefined && { reason: more.reason }),
-    ...(more.memo !== undefined && { memoId: ids.memos.get(String(more.memo)) }),
-    ...(more.reverses !== undefined && { reverses: ids.movements[Number(more.reverses)] }),
-    ...(more.corrects !== undefined && { corrects: ids.movements[Number(more.corrects)] }),
+    ...(more.memo !== undefined && { memoId: ids.memos.get(more.memo) }),
+    ...(more.reverses !== undefined && { reverses: ids.movements[more.reverses] }),
+    ...(more.corrects !== undefined && { corrects: ids.movements[more.corrects] }),
     newLots: plan.newLots.map(({ lot, letterOf }) => asLot(lot, letterOf, ids)),
     ...(newMemo && {
       newMemo: asMemo(newMemo, plan, ids),

@@ -68,10 +68,22 @@ export interface Leg extends Quantity, Mark {
   rule: CostRule;
 }
 
+/** What an act says besides its legs; movements and sales by their place in the book. */
+export interface More {
+  word?: string;
+  reason?: string;
+  answer?: string;
+  memo?: string;
+  reverses?: number;
+  corrects?: number;
+  sale?: number;
+  refusedFor?: string;
+}
+
 export interface Movement {
   kind: string;
   legs: Leg[];
-  more: Record<string, unknown>;
+  more: More;
   answers: Difference[];
   newDifferences: Difference[];
   isUndone: boolean;

@@ -73,7 +73,7 @@ export interface History {
 export async function liveThrough(
   house: LedgerHouse,
   { seed, acts }: { seed: number; acts: number },
-  every: (book: Book) => Promise<void> = async () => undefined,
+  every: (book: Book) => Promise<void> = () => Promise.resolve(),
 ): Promise<History> {
   const dice = new Dice(seed);
   const book = new Book(RULES);

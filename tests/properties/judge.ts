@@ -3,7 +3,7 @@ import type { Plan } from './plan.js';
 
 /** Why what a plan leaves behind may not stand; null where it may. */
 export function whyRefused(book: Book, plan: Plan): string | null {
-  if (plan.more.refusedFor) return String(plan.more.refusedFor);
+  if (plan.more.refusedFor) return plan.more.refusedFor;
   for (const { lot, place, line } of plan.legs) {
     if (!book.mayLie(lot, place, book.at(lot, place))) return `${lot.key} at ${place}`;
     if (lot.isConsigned && book.at(lot, place).cost !== 0) return 'consigned goods carry no cost';
@@ -26,7 +26,7 @@ export const sizeOf = ({ lots, memos, differences }: Book) => ({
 
 /** Takes a refused plan off the book again, as the database does by rolling back. */
 export function takeBack(book: Book, plan: Plan, before: ReturnType<typeof sizeOf>): void {
-  const undone = plan.kind === 'reversal' ? book.movements[Number(plan.more.reverses)] : undefined;
+  const undone = plan.kind === 'reversal' ? book.movements[plan.more.reverses ?? -1] : undefined;
   for (const leg of plan.legs) {
     const { weight, pieces, cost } = leg;
     book.post({ ...leg, weight: -weight, pieces: -pieces, cost: -cost });

@@ -12,6 +12,8 @@ interface Written {
   differences: Record<string, number>;
 }
 
+type Role = 'owner' | 'api' | 'worker' | 'reader';
+
 /** The same house in the database, written through the one writer as the role `api`. */
 export class LedgerHouse {
   #acts = 0;
@@ -26,30 +28,31 @@ export class LedgerHouse {
 
   private constructor(
     readonly database: TestDatabase,
-    readonly owner: pg.Client,
-    readonly api: pg.Client,
-    readonly worker: pg.Client,
-    readonly reader: pg.Client,
+    readonly clients: Record<Role, pg.Client>,
   ) {}
 
   static async open(): Promise<LedgerHouse> {
     const database = await freshDatabase();
-    const clients = (['owner', 'api', 'worker', 'reader'] as const).map(
-      (role) => new pg.Client({ connectionString: database.urls[role] }),
-    ) as [pg.Client, pg.Client, pg.Client, pg.Client];
-    await Promise.all(clients.map((client) => client.connect()));
-    const house = new LedgerHouse(database, ...clients);
+    const client = (role: Role) => new pg.Client({ connectionString: database.urls[role] });
+    const [owner, api, worker, reader] = [
+      client('owner'),
+      client('api'),
+      client('worker'),
+      client('reader'),
+    ];
+    await Promise.all([owner, api, worker, reader].map((one) => one.connect()));
+    const house = new LedgerHouse(database, { owner, api, worker, reader });
     await house.#fill();
     return house;
   }
 
   async close(): Promise<void> {
-    await Promise.all([this.owner, this.api, this.worker, this.reader].map((one) => one.end()));
+    await Promise.all(Object.values(this.clients).map((one) => one.end()));
     await this.database.drop();
   }
 
   async #fill(): Promise<void> {
-    await this.owner.query(`
+    await this.clients.owner.query(`
       INSERT INTO person (email, name, roles) VALUES ('a@house.test', 'Ada', '{owner}'), ('b@house.test', 'Ben', '{owner}');
       INSERT INTO house (name, zone, base_currency, price_currency, books_currency) VALUES ('House', 'UTC', 'USD', 'USD', 'USD');
       INSERT INTO party (number, name, is_customer, is_supplier, is_consignor, currency)
@@ -57,7 +60,7 @@ export class LedgerHouse {
       INSERT INTO place (kind, name, safe) VALUES ('drawer', 'drawer1', 'A'), ('drawer', 'drawer2', 'A'), ('show', 'show', 'A');
       INSERT INTO place (kind, name, person_id) VALUES ('person', 'person', 1);
       INSERT INTO place (kind, name, party_id) SELECT k, k, 1 FROM unnest(ARRAY['laboratory', 'workshop', 'memo in']) k`);
-    const { rows } = await this.owner.query<{ id: string; name: string; kind: string }>(
+    const { rows } = await this.clients.owner.query<{ id: string; name: string; kind: string }>(
       'SELECT id, name, kind FROM place',
     );
     for (const { id, name, kind } of rows) {
@@ -71,7 +74,7 @@ export class LedgerHouse {
     const key = `history-${String(this.#acts).padStart(12, '0')}`;
     const person = plan.answers.length > 0 ? 2 : 1;
     try {
-      const { rows } = await this.api.query<{ written: Written }>(
+      const { rows } = await this.clients.api.query<{ written: Written }>(
         'SELECT write_movement($1, $2, $3, $4) AS written',
         [person, key, 'hash', JSON.stringify(asAct(plan, this.ids))],
       );
@@ -90,7 +93,7 @@ export class LedgerHouse {
     for (const [key, id] of Object.entries(written.differences)) this.ids.differences.set(key, id);
     if (!plan.newMemo || !written.memoId) return;
     this.ids.memos.set(plan.newMemo.key, written.memoId);
-    const { rows } = await this.api.query<{ id: string }>(
+    const { rows } = await this.clients.api.query<{ id: string }>(
       'SELECT id FROM memo_line WHERE memo_id = $1 ORDER BY position',
       [written.memoId],
     );
@@ -101,7 +104,7 @@ export class LedgerHouse {
 
   /** All that lies anywhere, one row a lot and place; lines and differences with what they hold. */
   async state(): Promise<string[]> {
-    const { rows } = await this.owner.query<{ row: string }>(`
+    const { rows } = await this.clients.owner.query<{ row: string }>(`
       SELECT format('lot %s at %s %s: %s/%s/%s', lot_id, place_id, place_kind, weight, pieces, cost) AS row
         FROM balance WHERE weight <> 0 OR pieces <> 0 OR cost <> 0
       UNION ALL SELECT format('line %s: ', id) || concat_ws(' ', ${FLOWS.flatMap((flow) => [`${flow}_weight`, `${flow}_pieces`]).join(', ')}) FROM memo_line
@@ -121,9 +124,11 @@ export class LedgerHouse {
 
   /** The same rows as a book has them, under the database's ids. */
   async stateOf(book: Book): Promise<string[]> {
-    const { rows: memoPlaces } = await this.owner.query<{ id: string; kind: string; memo: string }>(
-      'SELECT id, kind, memo_id AS memo FROM place WHERE memo_id IS NOT NULL',
-    );
+    const { rows: memoPlaces } = await this.clients.owner.query<{
+      id: string;
+      kind: string;
+      memo: string;
+    }>('SELECT id, kind, memo_id AS memo FROM place WHERE memo_id IS NOT NULL');
     const placeIds = new Map([...this.ids.places].map(([key, id]) => [key, String(id)]));
     const keys = new Map([...this.ids.memos].map(([key, id]) => [String(id), key]));
     for (const { id, kind, memo } of memoPlaces) placeIds.set(`${kind}:${keys.get(memo)}`, id);

@@ -1,4 +1,15 @@
-import type { Book, CostRule, Difference, Leg, Line, Lot, Mark, Memo, Movement } from './book.js';
+import type {
+  Book,
+  CostRule,
+  Difference,
+  Leg,
+  Line,
+  Lot,
+  Mark,
+  Memo,
+  More,
+  Movement,
+} from './book.js';
 
 export const CARRIED: CostRule = { how: 'carried' };
 export const NONE: CostRule = { how: 'none' };
@@ -17,7 +28,7 @@ export class Plan implements Movement {
   constructor(
     readonly book: Book,
     readonly kind: string,
-    readonly more: Record<string, unknown> = {},
+    readonly more: More = {},
   ) {}
 
   /** Carats leave an inside place with their share of cost. */
@@ -65,10 +76,10 @@ export class Plan implements Movement {
   }
 
   /** A cost named at a boundary place, its counterpart on the lot. */
-  named(lot: Lot, boundary: string, amount: number, at: string, mark: Mark = {}): void {
+  named(lot: Lot, boundary: string, amount: number, at: { place: string } & Mark): void {
     const still = { lot, weight: 0, pieces: 0 };
-    const named = this.leg({ ...still, place: boundary, cost: amount }, { how: 'given', amount });
-    this.leg({ ...still, place: at, cost: -amount || 0, ...mark }, this.all(named));
+    const source = this.leg({ ...still, place: boundary, cost: amount }, { how: 'given', amount });
+    this.leg({ ...still, cost: -amount || 0, ...at }, this.all(source));
   }
 
   /** Weight or pieces found more (or less) than booked: no cost goes with them. */

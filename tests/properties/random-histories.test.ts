@@ -15,8 +15,8 @@ const NONE = { onlyModel: [], onlyDatabase: [] };
 
 async function agree(house: LedgerHouse, book: History['book']): Promise<void> {
   expect(await house.disagreements(book)).toEqual(NONE);
-  await house.worker.query('SELECT seal_waiting()');
-  const { lines } = await verifyLedger(house.reader);
+  await house.clients.worker.query('SELECT seal_waiting()');
+  const { lines } = await verifyLedger(house.clients.reader);
   expect(lines.filter((line) => line.includes(' FAIL '))).toEqual([]);
 }
 

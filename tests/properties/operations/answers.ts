@@ -66,7 +66,7 @@ export const staysWithCustomer: Chooser = (book, dice) => {
   const to = `kept:${line.memo}`;
   const kept = goesTo(index, 'customer keeps it', (held) => ({ to, toMark: by(held, 'kept') }));
   return (now) => {
-    const plan = kept(now) as Plan;
+    const plan = kept(now);
     const held = plan.answers[0];
     const leg = plan.legs.find(({ place }) => place === to);
     if (held?.line && leg) {

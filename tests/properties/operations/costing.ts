@@ -18,7 +18,7 @@ export const charge: Chooser = (book, dice) => {
   return (now) => {
     const plan = new Plan(now, 'charge');
     const lot = lotOf(now, index);
-    plan.named(lot, 'charges', -now.rules.fee(fee) || 0, place, markAt(now, lot, place));
+    plan.named(lot, 'charges', -now.rules.fee(fee) || 0, { place, ...markAt(now, lot, place) });
     return plan;
   };
 };
@@ -31,7 +31,7 @@ export const writeDown: Chooser = (book, dice) => {
   const amount = dice.between(1, has.cost);
   return (now) => {
     const plan = new Plan(now, 'write-down', { reason: 'worth less' });
-    plan.named(lotOf(now, index), 'loss', now.rules.writeDown(amount), place);
+    plan.named(lotOf(now, index), 'loss', now.rules.writeDown(amount), { place });
     return plan;
   };
 };

@@ -71,7 +71,7 @@ export const backFromWork: Chooser = (book, dice) => {
     const plan = new Plan(now, `${place} back`);
     const one = lotOf(now, index);
     plan.move({ lot: one, from: place, to: 'drawer1', goods });
-    if (fee > 0) plan.named(one, 'charges', -now.rules.fee(fee) || 0, 'drawer1');
+    if (fee > 0) plan.named(one, 'charges', -now.rules.fee(fee) || 0, { place: 'drawer1' });
     return plan;
   };
 };

@@ -12,7 +12,12 @@ interface Part {
 }
 
 /** What passes the conversion place comes out as parts that share its cost by largest remainder. */
-function comeOut(plan: Plan, passed: number[], parts: Part[], make: () => Lot, to: string): void {
+function comeOut(
+  plan: Plan,
+  passed: number[],
+  parts: Part[],
+  { make, to }: { make: () => Lot; to: string },
+): void {
   const total = passed.reduce((sum, index) => sum + plan.costOf(index), 0);
   const costs = plan.book.rules.allot(
     total,
@@ -65,13 +70,10 @@ export const divide: Chooser = (book, dice) => {
       const loss = { lot: one, place: 'loss', weight: lost, pieces: 0, cost: gone };
       plan.leg(loss, isWithin ? NONE : { how: 'allotted', pool, weight: lost });
     }
-    comeOut(
-      plan,
-      [passed],
-      parts,
-      () => plan.makeLot('parcel', { isEstimated: lot.isEstimated }),
-      place,
-    );
+    comeOut(plan, [passed], parts, {
+      make: () => plan.makeLot('parcel', { isEstimated: lot.isEstimated }),
+      to: place,
+    });
     return plan;
   };
 };
@@ -99,7 +101,10 @@ export const mixOrBreak: Chooser = (book, dice) => {
     const weight = sources.reduce((sum, { goods }) => sum + goods.weight, 0);
     const pieces = sources.reduce((sum, { goods }) => sum + goods.pieces, 0);
     const part = { weight, pieces, share: 1 };
-    comeOut(plan, passed, [part], () => plan.makeLot('parcel', { isEstimated }), 'drawer1');
+    comeOut(plan, passed, [part], {
+      make: () => plan.makeLot('parcel', { isEstimated }),
+      to: 'drawer1',
+    });
     return plan;
   };
 };
@@ -116,7 +121,7 @@ const breakPair: Chooser = (book, dice) => {
     const taken = plan.take(lot, place, has);
     const passes = { ...has, cost: -plan.costOf(taken) || 0 };
     const passed = plan.leg({ lot, place: 'conversion', ...passes }, plan.all(taken));
-    comeOut(plan, [passed], parts, () => plan.makeLot('stone'), place);
+    comeOut(plan, [passed], parts, { make: () => plan.makeLot('stone'), to: place });
     return plan;
   };
 };
@@ -135,7 +140,7 @@ export const recut: Chooser = (book, dice) => {
   return (now) => {
     const plan = new Plan(now, 'recut');
     const lot = lotOf(now, index);
-    plan.named(lot, 'charges', -labour, 'workshop');
+    plan.named(lot, 'charges', -labour, { place: 'workshop' });
     const share = now.rules.share(now.at(lot, 'workshop').cost, lost, has.weight);
     const gone = now.rules.cutAway(share);
     plan.leg({ lot, place: 'workshop', weight: -lost, pieces: 0, cost: -gone || 0 }, NONE);

@@ -1,6 +1,7 @@
 import type { Client } from 'pg';
 
-import { ASSERTIONS, GUARDS_NOW, usesGuards } from './assertions.js';
+import { ASSERTIONS } from './assertions.js';
+import { GUARDS_NOW } from './guards-now.js';
 import { guards } from './guards.js';
 
 const NAMED = 10;
@@ -17,13 +18,13 @@ export async function verifyLedger(client: Client): Promise<Verdict> {
   const verdict: Verdict = { lines: [], failed: 0, ran: 0 };
   try {
     for (const [index, assertion] of ASSERTIONS.entries()) {
-      const sql = usesGuards(assertion)
+      const sql = assertion.usesGuards
         ? `WITH guards_now AS (${GUARDS_NOW}) ${assertion.offenders}`
         : assertion.offenders;
       const { rows } = await client.query<string[]>({
         text: sql,
         rowMode: 'array',
-        ...(usesGuards(assertion) && { values: [guards] }),
+        ...(assertion.usesGuards && { values: [guards] }),
       });
       const number = index + 1;
       const names =
