@@ -9,7 +9,7 @@ export interface Sieve {
   values: unknown[];
 }
 
-/** Reads a sieve from the address: `shape=Round,Oval&colour=D-J&each=0.5-2&clarity=VVS2-SI2&place=…`. */
+/** Reads a sieve from the address: `shape=Round,Oval&colour=D-J&each=0.5-2&clarity=VVS2-SI2&place=…&report=none&supplier=C 118`. */
 export function readSieve(query: Request['query']): Sieve {
   const sieve: Sieve = { where: [], values: [] };
   const add = (condition: (at: string) => string, value: unknown) => {
@@ -35,6 +35,12 @@ export function readSieve(query: Request['query']): Sieve {
     if (to !== null) add((at) => `l.ask_price <= ${at}`, to);
   });
   place(text('place'), add, sieve);
+  papers(text('report'), add, sieve);
+  if (text('supplier'))
+    add(
+      (at) => `l.source_party_id = (SELECT y.id FROM party y WHERE y.number::text = ${at})`,
+      text('supplier').replace(/^C\s*/i, ''),
+    );
   if (text('q')) {
     add(
       (at) =>
@@ -80,6 +86,13 @@ function numbers(
     ]);
   }
   use(low, high);
+}
+
+/** `report=none` is goods without one, `report=any` with one, else the laboratory's name. */
+function papers(text: string, add: Add, sieve: Sieve): void {
+  if (text === 'none') sieve.where.push(`l.report_number = ''`);
+  else if (text === 'any') sieve.where.push(`l.report_number <> ''`);
+  else if (text) add((at) => `lower(l.report_laboratory) = lower(${at})`, text);
 }
 
 const PARTS = ['safe', 'out', 'returned', 'sold', 'missing'];
