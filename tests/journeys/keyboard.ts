@@ -28,3 +28,19 @@ export async function scan(page: Page, code: string): Promise<void> {
   await page.keyboard.type(code);
   await page.keyboard.press('Enter');
 }
+
+/**
+ * The same as a scanner does it where nothing waits for a code: the characters follow each other
+ * faster than anybody types, however busy this machine is.
+ */
+export async function scanAtOnce(page: Page, code: string): Promise<void> {
+  const devtools = await page.context().newCDPSession(page);
+  const keys = [...code].map((key) => ({ key, text: key }));
+  await Promise.all(
+    [...keys, { key: 'Enter', text: '\r' }].flatMap(({ key, text }) => [
+      devtools.send('Input.dispatchKeyEvent', { type: 'keyDown', key, text }),
+      devtools.send('Input.dispatchKeyEvent', { type: 'keyUp', key }),
+    ]),
+  );
+  await devtools.detach();
+}

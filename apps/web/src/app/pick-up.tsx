@@ -60,6 +60,7 @@ export function PickUp({ ref }: { ref: Ref<PickUpHandle> }) {
         </svg>
         <input
           ref={input}
+          data-scans
           aria-label="Pick up a lot, memo or customer"
           placeholder="Pick up a lot, memo or customer"
           value={text}

@@ -5,7 +5,8 @@ import { Link, NavLink, Outlet, useNavigate } from 'react-router-dom';
 
 import { Dialog } from '../components/dialog';
 import { api } from '../lib/api-client';
-import { KeyLine, KeysProvider, lettersAreOn } from '../lib/keys';
+import { lettersAreOn } from '../lib/key-listener';
+import { KeyLine, KeysProvider } from '../lib/keys';
 import { meQuery, useMe } from '../lib/session';
 import { PickUp, type PickUpHandle } from './pick-up';
 

@@ -105,6 +105,7 @@ export function ScanLine({
           <div className="box" style={{ height: 40, fontSize: 16 }}>
             <input
               ref={input}
+              data-scans
               aria-label="Scan or type a lot"
               value={text}
               placeholder="Scan a paper, or type a lot number"

@@ -158,6 +158,7 @@ export function WeighPanel({
         {isStone && (
           <Field
             label="Report or inscription read"
+            data-scans
             value={form.report}
             onValue={(report) => {
               change({ report });
