@@ -1,10 +1,14 @@
 import { useCallback, useState } from 'react';
 
 import { Offline } from './api-client';
+import { useMe } from './session';
 
-/** What was typed into a form, kept in this browser through a reload, a refusal and a lost connection. */
+/**
+ * What was typed into a form, kept in this browser through a reload, a refusal and a lost connection.
+ * Each person has his own: somebody else at the same desk must not read a cost that was typed here.
+ */
 export function useKept<T>(name: string, empty: T): [T, (change: Partial<T>) => void, () => void] {
-  const key = `foldwell form ${name}`;
+  const key = `foldwell form ${useMe().id} ${name}`;
   const [value, setValue] = useState<T>(() => {
     try {
       return { ...empty, ...(JSON.parse(localStorage.getItem(key) ?? '{}') as Partial<T>) };

@@ -1,10 +1,10 @@
 import { useCallback, useEffect, useRef, useState } from 'react';
 
 import { api, Problem } from '../../../lib/api-client';
+import { useMe } from '../../../lib/session';
 import { EMPTY_DRAFT, type MemoDraft } from './memo-draft';
 
 const KEEPS_AFTER_MS = 700;
-const LOCAL = 'foldwell memo draft';
 
 interface Stored {
   id: string | null;
@@ -27,8 +27,9 @@ interface KeptDraft {
  * connection it stays here and says so.
  */
 export function useMemoDraft(openId: string | undefined): KeptDraft {
+  const local = `foldwell memo draft ${useMe().id}`;
   const [stored, setStored] = useState<Stored>(() =>
-    openId ? { id: openId, version: 1, draft: EMPTY_DRAFT } : readLocal(),
+    openId ? { id: openId, version: 1, draft: EMPTY_DRAFT } : readLocal(local),
   );
   const [state, setState] = useState('');
   const [isReady, setReady] = useState(!openId);
@@ -53,7 +54,7 @@ export function useMemoDraft(openId: string | undefined): KeptDraft {
       const kept = await send(id, version, draft);
       setStored((was) => ({ ...was, id: kept.id, version: kept.version }));
       latest.current = { ...latest.current, ...kept };
-      writeLocal({ ...latest.current, ...kept });
+      writeLocal(local, { ...latest.current, ...kept });
       setState(`Draft kept ${clock}`);
       return kept.id;
     } catch (problem) {
@@ -64,26 +65,26 @@ export function useMemoDraft(openId: string | undefined): KeptDraft {
       );
       return latest.current.id;
     }
-  }, []);
+  }, [local]);
 
   const change = useCallback(
     (part: Partial<MemoDraft>) => {
       setStored((was) => {
         const next = { ...was, draft: { ...was.draft, ...part } };
-        writeLocal(next);
+        writeLocal(local, next);
         return next;
       });
       window.clearTimeout(timer.current);
       timer.current = window.setTimeout(() => void keepNow(), KEEPS_AFTER_MS);
     },
-    [keepNow],
+    [keepNow, local],
   );
 
   const forget = useCallback(() => {
     window.clearTimeout(timer.current);
-    localStorage.removeItem(LOCAL);
+    localStorage.removeItem(local);
     setStored({ id: null, version: 1, draft: EMPTY_DRAFT });
-  }, []);
+  }, [local]);
   return { draft: stored.draft, change, state, keepNow, forget, isReady };
 }
 
@@ -121,9 +122,9 @@ async function send(
   }
 }
 
-function readLocal(): Stored {
+function readLocal(local: string): Stored {
   try {
-    const kept = JSON.parse(localStorage.getItem(LOCAL) ?? 'null') as Stored | null;
+    const kept = JSON.parse(localStorage.getItem(local) ?? 'null') as Stored | null;
     if (kept) return { ...kept, draft: { ...EMPTY_DRAFT, ...kept.draft } };
   } catch {
     // What can't be read is not a draft.
@@ -131,6 +132,6 @@ function readLocal(): Stored {
   return { id: null, version: 1, draft: EMPTY_DRAFT };
 }
 
-function writeLocal(stored: Stored): void {
-  localStorage.setItem(LOCAL, JSON.stringify(stored));
+function writeLocal(local: string, stored: Stored): void {
+  localStorage.setItem(local, JSON.stringify(stored));
 }
