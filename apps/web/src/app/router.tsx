@@ -1,5 +1,5 @@
 import { type ComponentType, createElement, lazy } from 'react';
-import { createBrowserRouter } from 'react-router-dom';
+import { createBrowserRouter, Link } from 'react-router-dom';
 
 import { SignedIn } from '../lib/session';
 import { Shell } from './shell';
@@ -118,7 +118,7 @@ export const router = createBrowserRouter([
           <div className="p-6">
             <h1>Not there</h1>
             <p className="soft">
-              There is nothing at that address. <a href="/">First light</a>
+              There is nothing at that address. <Link to="/">First light</Link>
             </p>
           </div>
         ),

@@ -4,7 +4,8 @@ import { Suspense, useRef, useState } from 'react';
 import { Link, NavLink, Outlet, useNavigate } from 'react-router-dom';
 
 import { Dialog } from '../components/dialog';
-import { api } from '../lib/api-client';
+import { Refused } from '../components/refused';
+import { api, Problem } from '../lib/api-client';
 import { lettersAreOn } from '../lib/key-listener';
 import { KeyLine, KeysProvider } from '../lib/keys';
 import { meQuery, useMe } from '../lib/session';
@@ -105,8 +106,14 @@ function Who() {
   const navigate = useNavigate();
   const [isDark, setDark] = useState(document.documentElement.dataset.theme === 'dark');
   const [letters, setLetters] = useState(lettersAreOn());
+  const [error, setError] = useState<unknown>();
   const leave = async (path: string) => {
-    await api(path, { method: 'POST' });
+    try {
+      await api(path, { method: 'POST' });
+    } catch (problem) {
+      // Who isn't signed in any more has left.
+      if (!(problem instanceof Problem && problem.body.status === 401)) return setError(problem);
+    }
     client.clear();
     void navigate('/sign-in');
   };
@@ -145,6 +152,7 @@ function Who() {
         <button type="button" className="link" onClick={() => void leave('/sign-out-everywhere')}>
           Sign out everywhere
         </button>
+        <Refused error={error} />
       </div>
     </details>
   );

@@ -1,6 +1,6 @@
 import type { MemoRow } from '@foldwell/contracts';
 import { dueWords, formatAmount, formatCarats, shortDate } from '@foldwell/quantities';
-import { useNavigate } from 'react-router-dom';
+import { Link, useNavigate } from 'react-router-dom';
 
 import { BalanceBar, type Parts } from './balance-bar';
 import type { useCurrentRow } from './row-keys';
@@ -66,15 +66,7 @@ export function MemoTable({
               onDoubleClick={() => void navigate(`/memos/${memo.number}`)}
             >
               <td className="lot">
-                <a
-                  href={`/memos/${memo.number}`}
-                  onClick={(event) => {
-                    event.preventDefault();
-                    void navigate(`/memos/${memo.number}`);
-                  }}
-                >
-                  M {memo.number}
-                </a>
+                <Link to={`/memos/${memo.number}`}>M {memo.number}</Link>
               </td>
               <td>{memo.party}</td>
               <td className="n wide">{memo.lots}</td>

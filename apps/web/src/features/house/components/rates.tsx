@@ -1,4 +1,5 @@
 import type { House } from '@foldwell/contracts';
+import { readDecimal } from '@foldwell/quantities';
 import { useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 
@@ -7,12 +8,15 @@ import { fieldProblem, Refused } from '../../../components/refused';
 import { api } from '../../../lib/api-client';
 import { useMay } from '../../../lib/session';
 
+const RATE_DECIMALS = 8;
+
 /** Currencies with dated rates by hand; a paper keeps the rate it was issued at. */
 export function Rates({ house }: { house: House }) {
   const may = useMay('owner', 'bookkeeper');
   const client = useQueryClient();
   const [form, setForm] = useState({ currency: '', onDate: house.today, rate: '' });
   const [error, setError] = useState<unknown>();
+  const [problem, setProblem] = useState<string>();
   const text = (name: keyof typeof form) => ({
     value: form[name],
     onValue: (value: string) => setForm({ ...form, [name]: value }),
@@ -20,13 +24,16 @@ export function Rates({ house }: { house: House }) {
   });
   const add = async () => {
     setError(undefined);
+    const rate = readDecimal(form.rate, { decimals: RATE_DECIMALS, what: 'Rate' });
+    setProblem(rate.kind === 'ok' ? undefined : rate.why);
+    if (rate.kind !== 'ok') return;
     try {
       await api('/rates', {
         method: 'POST',
         body: {
           currency: form.currency.toUpperCase(),
           onDate: form.onDate,
-          rate: Number(form.rate.replace(',', '.')),
+          rate: rate.value / 10 ** RATE_DECIMALS,
         },
       });
       setForm({ ...form, currency: '', rate: '' });
@@ -74,6 +81,7 @@ export function Rates({ house }: { house: House }) {
             label={`${house.baseCurrency} for one`}
             isNumber
             {...text('rate')}
+            problem={problem ?? fieldProblem(error, 'rate')}
             className="w-[120px]"
           />
           <button type="button" className="btn" onClick={() => void add()}>

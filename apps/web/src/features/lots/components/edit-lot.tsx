@@ -2,10 +2,11 @@ import type { LotDetail, ParticularsRequest } from '@foldwell/contracts';
 import { readMoney } from '@foldwell/quantities';
 import { useState } from 'react';
 
+import { ChangedMeanwhile } from '../../../components/changed-meanwhile';
 import { Field } from '../../../components/field';
 import { Refused } from '../../../components/refused';
-import { api, Problem } from '../../../lib/api-client';
-import { useKept } from '../../../lib/kept';
+import { api } from '../../../lib/api-client';
+import { newerVersion, useKeptEdit } from '../../../lib/kept-edit';
 import { useKeys } from '../../../lib/keys';
 import { useMay, useMe } from '../../../lib/session';
 import { ParticularsFields } from './particulars-fields';
@@ -25,17 +26,13 @@ export function EditLot({
     house: { priceCurrency: currency },
   } = useMe();
   const isOwner = useMay('owner');
-  const [form, change, forget] = useKept<ParticularsForm>(
-    `edit ${lot.row.number}`,
-    particularsForm(lot.particulars, currency),
-  );
-  const [version, setVersion] = useState(lot.version);
+  const { form, change, forget, version, refused } = useKeptEdit<ParticularsForm>(lot.row.number, {
+    values: particularsForm(lot.particulars, currency),
+    version: lot.version,
+  });
   const [error, setError] = useState<unknown>();
   const [problems, setProblems] = useState<Record<string, string>>({});
-  const theirs =
-    error instanceof Problem && error.body.status === 412
-      ? (error.body.current as { version: number; particulars: ParticularsRequest })
-      : null;
+  const theirs = newerVersion<{ particulars: ParticularsRequest }>(error);
   const save = async () => {
     const read = readParticulars(form, currency);
     setProblems(read.problems);
@@ -54,8 +51,7 @@ export function EditLot({
       onDone();
     } catch (problem) {
       setError(problem);
-      if (problem instanceof Problem && problem.body.status === 412)
-        setVersion((problem.body.current as { version: number }).version);
+      refused(problem);
     }
   };
   useKeys([
@@ -85,17 +81,7 @@ export function EditLot({
         <p className="tiny quiet">Floor price, owner only.</p>
       )}
       {theirs && (
-        <div className="note warn">
-          <h3 className="red">Changed meanwhile</h3>
-          <p>
-            Theirs now:{' '}
-            {Object.entries(particularsForm(theirs.particulars, currency))
-              .filter(([name, value]) => value !== form[name as keyof ParticularsForm])
-              .map(([name, value]) => `${name} ${value || 'empty'}`)
-              .join(', ') || 'the same as yours'}
-            . Yours stands in the fields; keep again to write it over theirs.
-          </p>
-        </div>
+        <ChangedMeanwhile theirs={particularsForm(theirs.particulars, currency)} mine={form} />
       )}
       {!theirs && <Refused error={error} />}
       <div className="flex gap-2">

@@ -3,10 +3,12 @@ import {
   CLARITIES,
   COLOURS,
   formatAmount,
+  formatCarats,
   MAKE_MARKS,
   rangeWords,
   rankOf,
   readCarats,
+  readDecimal,
   readMillimetres,
   readMoney,
 } from '@foldwell/quantities';
@@ -92,7 +94,7 @@ export function particularsForm(from: ParticularsRequest, currency: string): Par
     ...proportionsForm(from.proportions),
     laboratory: words(from.reportLaboratory),
     report: words(from.reportNumber),
-    stated: from.statedWeight ? (from.statedWeight / 1000).toFixed(2) : '',
+    stated: from.statedWeight ? formatCarats(from.statedWeight).replaceAll(',', '') : '',
     country: words(from.miningCountry),
     evidence: words(from.miningEvidence),
     inscription: words(from.inscription),
@@ -197,16 +199,29 @@ function measures(text: string, problems: Record<string, string>): (number | nul
   return readings.map((reading) => (reading.kind === 'ok' ? reading.value : null));
 }
 
+const PROPORTIONS = {
+  depth: 'Depth',
+  table: 'Table',
+  crownAngle: 'Crown angle',
+  pavilionAngle: 'Pavilion angle',
+} as const;
+const MOST_OF_A_PROPORTION = 120;
+
+/** In percent or degrees, to hundredths, as reports state them. */
 function proportions(
   form: ParticularsForm,
   problems: Record<string, string>,
 ): NonNullable<ParticularsRequest['proportions']> {
   const read: Record<string, number> = {};
-  for (const name of ['depth', 'table', 'crownAngle', 'pavilionAngle'] as const) {
-    if (form[name].trim() === '') continue;
-    const value = Number(form[name].replace(',', '.').replace(/[%°\s]/g, ''));
-    if (Number.isFinite(value) && value > 0 && value < 121) read[name] = value;
-    else problems[name] = `${form[name]} is not a number that fits here.`;
+  for (const name of Object.keys(PROPORTIONS) as (keyof typeof PROPORTIONS)[]) {
+    const text = form[name].replace(/[%°]\s*$/, '');
+    if (text.trim() === '') continue;
+    const what = PROPORTIONS[name];
+    const reading = readDecimal(text, { decimals: 2, what });
+    if (reading.kind !== 'ok') problems[name] = reading.why;
+    else if (reading.value === 0 || reading.value > MOST_OF_A_PROPORTION * 100)
+      problems[name] = `${what} ${form[name].trim()} does not fit a stone.`;
+    else read[name] = reading.value / 100;
   }
   return read;
 }

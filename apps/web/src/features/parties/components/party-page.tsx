@@ -4,22 +4,19 @@ import {
   formatAmount,
   formatCarats,
   formatMoney,
-  readMoney,
   shortDate,
 } from '@foldwell/quantities';
-import { useQuery, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useQuery } from '@tanstack/react-query';
 import { Link, useNavigate, useParams } from 'react-router-dom';
 
-import { Field, TextArea } from '../../../components/field';
 import { LimitBar } from '../../../components/limit-bar';
 import { Loaded } from '../../../components/loading';
 import { MemoTable } from '../../../components/memo-table';
-import { fieldProblem, Refused } from '../../../components/refused';
 import { useCurrentRow } from '../../../components/row-keys';
 import { api } from '../../../lib/api-client';
 import { useKeys } from '../../../lib/keys';
 import { useMay, useMe } from '../../../lib/session';
+import { EditParty } from './edit-party';
 
 /** One customer: limit, terms, exposure now, what they hold. */
 export function PartyPage() {
@@ -30,7 +27,7 @@ export function PartyPage() {
   });
   return (
     <Loaded query={query} says={`Opening C ${number}.`}>
-      {(party) => <Party party={party} key={party.version} />}
+      {(party) => <Party party={party} />}
     </Loaded>
   );
 }
@@ -130,7 +127,7 @@ function Party({ party }: { party: PartyDetail }) {
           )}
           <Holds party={party} />
         </div>
-        <Edit party={party} />
+        <EditParty party={party} />
       </section>
     </>
   );
@@ -191,104 +188,5 @@ function Holds({ party }: { party: PartyDetail }) {
         </tbody>
       </table>
     </>
-  );
-}
-
-function Edit({ party }: { party: PartyDetail }) {
-  const isOwner = useMay('owner');
-  const may = useMay('owner', 'dealer', 'buyer');
-  const client = useQueryClient();
-  const own = party.particulars;
-  const plain = (amount: number | null | undefined) =>
-    amount == null ? '' : formatAmount(amount, own.currency, true).replaceAll(',', '');
-  const [form, setForm] = useState({
-    contact: own.contact,
-    email: own.email,
-    phone: own.phone,
-    address: own.address,
-    terms: own.terms,
-    memoDays: String(own.memoDays),
-    note: own.note,
-    creditLimit: plain(own.creditLimit),
-    memoLimit: plain(own.memoLimit),
-    identityPapersUntil: own.identityPapersUntil ?? '',
-    resaleCertificateUntil: own.resaleCertificateUntil ?? '',
-    sanctionsCheckedOn: own.sanctionsCheckedOn ?? '',
-  });
-  const [error, setError] = useState<unknown>();
-  const text = (name: keyof typeof form) => ({
-    value: form[name],
-    onValue: (value: string) => setForm({ ...form, [name]: value }),
-    problem: fieldProblem(error, name),
-  });
-  const save = async () => {
-    const { creditLimit, memoLimit, memoDays, ...rest } = form;
-    const limits = [creditLimit, memoLimit].map((typed) =>
-      typed.trim() === '' ? null : readMoney(typed, own.currency, 'Limit'),
-    );
-    const bad = limits.find((limit) => limit && limit.kind !== 'ok');
-    if (bad && 'why' in bad) return setError(new Error(bad.why));
-    const [credit, memo] = limits.map((limit) => (limit?.kind === 'ok' ? limit.value : null));
-    const dates = Object.fromEntries(
-      (['identityPapersUntil', 'resaleCertificateUntil', 'sanctionsCheckedOn'] as const).map(
-        (name) => [name, rest[name] || null],
-      ),
-    );
-    try {
-      await api(`/parties/${party.number}`, {
-        method: 'PATCH',
-        version: party.version,
-        body: {
-          ...rest,
-          ...dates,
-          memoDays: Number(memoDays),
-          ...(isOwner && { creditLimit: credit, memoLimit: memo }),
-        },
-      });
-      await client.invalidateQueries();
-    } catch (problem) {
-      setError(problem);
-    }
-  };
-  return (
-    <aside className="side grid gap-3 content-start">
-      <h2>Limit, terms and papers</h2>
-      <div className="grid grid-cols-2 gap-3">
-        {isOwner ? (
-          <>
-            <Field label="Limit" unit={own.currency} isNumber {...text('creditLimit')} />
-            <Field label="Limit for one memo" unit={own.currency} isNumber {...text('memoLimit')} />
-          </>
-        ) : (
-          <p className="col-span-2 tiny quiet">Limits, owner only. Ask an owner.</p>
-        )}
-        <Field label="Memo terms" unit="d" isNumber {...text('memoDays')} />
-        <Field label="Terms" {...text('terms')} />
-        <Field label="Identity papers until" type="date" {...text('identityPapersUntil')} />
-        <Field label="Resale certificate until" type="date" {...text('resaleCertificateUntil')} />
-        <Field label="Sanctions lists checked on" type="date" {...text('sanctionsCheckedOn')} />
-        <Field label="Contact" {...text('contact')} />
-        <Field label="E-mail" {...text('email')} />
-        <Field label="Telephone" {...text('phone')} />
-      </div>
-      <TextArea label="Address" {...text('address')} rows={2} />
-      <TextArea label="Notes" {...text('note')} rows={2} />
-      <p className="tiny quiet">
-        Parties are checked by hand against sanctions lists; date and person are kept. Identity
-        papers and notes are kept for this purpose only.
-      </p>
-      <Refused error={error} />
-      {may ? (
-        <button
-          type="button"
-          className="btn primary justify-self-start"
-          onClick={() => void save()}
-        >
-          Keep changes
-        </button>
-      ) : (
-        <p className="tiny quiet">Changing customers, owner, dealer and buyer only.</p>
-      )}
-    </aside>
   );
 }
